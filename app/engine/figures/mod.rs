@@ -1,0 +1,1 @@
+//! Charts as finished descriptions: axes, marks, roles, words. No colours, no pixels.

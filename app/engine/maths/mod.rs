@@ -1,0 +1,6 @@
+//! Pure arithmetic, free of trade words: everything here could serve another program.
+
+/// Estimates with their standard errors.
+pub mod estimate;
+
+pub use estimate::Estimate;
