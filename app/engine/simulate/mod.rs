@@ -4,6 +4,9 @@
 pub mod plan;
 /// What a run leaves behind.
 pub mod run;
+/// The exact joint transition of all factors over a step.
+pub mod transition;
 
 pub use plan::Plan;
 pub use run::{DaySample, Run, SimulateError, Watcher};
+pub use transition::Transition;
