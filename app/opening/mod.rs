@@ -50,6 +50,10 @@ pub struct Opened {
     pub inputs: Inputs,
     /// Days without trading, ascending; none where trading days are weekdays.
     pub holidays: Option<Vec<Date>>,
+    /// The book's currency, where it is known beside the files: the built-in example's.
+    pub book_currency: Option<String>,
+    /// Date of the prices, where it is known beside the files: the built-in example's.
+    pub as_of: Option<Date>,
     /// What the readers want told.
     pub notices: Vec<Notice>,
 }
@@ -85,6 +89,8 @@ impl Parts {
                 correlation: self.correlation,
             },
             holidays: self.holidays,
+            book_currency: None,
+            as_of: None,
             notices: self.notices,
         })
     }
