@@ -1,12 +1,22 @@
 //! Paths of the book: random numbers by address, the exact joint transition, the block loop.
 
+mod block;
+mod elementary;
+mod falls;
 /// What is to be run.
 pub mod plan;
-/// What a run leaves behind.
+mod program;
+/// Random numbers by address.
+pub mod random;
+/// A run and what it leaves behind.
 pub mod run;
+mod tile;
 /// The exact joint transition of all factors over a step.
 pub mod transition;
+mod triangle;
 
-pub use plan::Plan;
-pub use run::{DaySample, Run, SimulateError, Watcher};
+pub use block::InstructionSet;
+pub use plan::{Plan, SimulateError};
+pub use random::Stream;
+pub use run::{DaySample, Run, Unwatched, Watcher, draw_again, run, run_with};
 pub use transition::Transition;
