@@ -1,0 +1,58 @@
+//! Figures of the current inputs, as far as they have arrived: closed form first, then from more and more paths.
+//! Filled by the worker's answers; panels only read.
+
+use ebbmark_engine::factors::Model;
+use ebbmark_engine::measures::{Bands, Density, Reading};
+use std::sync::Arc;
+
+/// Where the run stands.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
+pub enum RunState {
+    /// Nothing has been asked yet, or the inputs can't be run.
+    #[default]
+    Idle,
+    /// Paths are arriving.
+    Running,
+    /// All paths are done.
+    Finished,
+    /// Stopped by the user; what had arrived stands.
+    Stopped,
+}
+
+/// Everything read at the reading line.
+#[derive(Debug, Clone)]
+pub struct AtLine {
+    /// The day read.
+    pub day: u32,
+    /// All figures.
+    pub reading: Reading,
+    /// Distribution of the book's value.
+    pub values: Density,
+    /// Distribution of the largest fall so far.
+    pub falls: Density,
+    /// Paths behind it; none while it is the closed form.
+    pub paths: Option<usize>,
+}
+
+/// Figures, each the newest that has arrived.
+#[derive(Debug, Default)]
+pub struct Live {
+    /// Number of the current run; answers of older runs are dropped.
+    pub generation: u64,
+    /// The last valid model.
+    pub model: Option<Arc<Model>>,
+    /// Whether model and figures are from before the last edit, which made the inputs invalid.
+    pub is_before_edit: bool,
+    /// Days on which the line can stop, ascending; the last is the horizon.
+    pub days: Arc<Vec<u32>>,
+    /// Bands ahead.
+    pub bands: Option<Arc<Bands>>,
+    /// Everything at the reading line.
+    pub at_line: Option<Arc<AtLine>>,
+    /// Where the run stands.
+    pub state: RunState,
+    /// Paths done so far.
+    pub paths_done: usize,
+    /// Seconds since the run began, or that it took.
+    pub seconds: f64,
+}
