@@ -1,9 +1,9 @@
 //! Ebbmark, the program: how much a book of positions can lose, at every horizon at once.
 //! Only names the rooms; `main.rs` picks between a window and a command without a screen.
 
+/// The window.
+pub mod desk;
 /// Files become a book.
 pub mod opening;
 /// What is kept on disk: workspaces, and the session that survives a crash.
 pub mod workspace;
-/// The window.
-pub mod desk;

@@ -2,7 +2,7 @@
 
 /// Everything that can be done in the window.
 pub mod commands;
-/// What the window shows, and how commands change it.
-pub mod session;
 /// Short messages that stay until put away.
 pub mod notices;
+/// What the window shows, and how commands change it.
+pub mod session;

@@ -57,7 +57,9 @@ impl Command {
             Self::AskPath(PathPurpose::Open) => {
                 "Open a workspace, or positions with the files that go with them"
             }
-            Self::TypePath(PathPurpose::Open) => "Type the path of a file to open; several go between semicolons",
+            Self::TypePath(PathPurpose::Open) => {
+                "Type the path of a file to open; several go between semicolons"
+            }
             Self::AskPath(PathPurpose::SaveAs) | Self::TypePath(PathPurpose::SaveAs) => {
                 "Save everything needed to see the same figures again"
             }

@@ -6,8 +6,8 @@ pub mod live;
 /// Edits that can be taken back.
 pub mod undo;
 
-use super::notices::{Notices, Refusal};
 use super::commands::PathPurpose;
+use super::notices::{Notices, Refusal};
 use crate::workspace::{Document, View};
 use ebbmark_engine::tables::Fault;
 pub use live::{AtLine, Live, RunState};
