@@ -2,19 +2,19 @@
 //! a room uses only rooms named above it. No screen, no clock, no files: readers take text
 //! and a label, and the caller opens files and starts threads.
 
+/// Pure arithmetic: linear algebra, quantiles, moments, roots, special functions. No trade words.
+pub mod maths;
+/// Delimited text with places, and the faults and notices that point at them.
+pub mod tables;
+/// Dates: trading days and holidays.
+pub mod history;
 /// What is held: holdings and sensitivities as they were written.
 pub mod book;
 /// What moves the book: risk factors, their diffusions, their correlation; the checked model.
 pub mod factors;
-/// Every chart as a finished description that screen and paper draw alike.
-pub mod figures;
-/// Dates: trading days and holidays.
-pub mod history;
-/// Pure arithmetic: linear algebra, quantiles, moments, roots, special functions. No trade words.
-pub mod maths;
-/// What the paths say: VaR, ES, drawdown, limit, moments; and the closed forms beside them.
-pub mod measures;
 /// Paths of the book: random numbers by address, exact transition, block loop.
 pub mod simulate;
-/// Delimited text with places, and the faults and notices that point at them.
-pub mod tables;
+/// What the paths say: VaR, ES, drawdown, limit, moments; and the closed forms beside them.
+pub mod measures;
+/// Every chart as a finished description that screen and paper draw alike.
+pub mod figures;

@@ -1,0 +1,65 @@
+//! A line on standard error that grows while paths are drawn. Shown on a terminal only.
+
+use ebbmark_engine::simulate::{Run, Watcher};
+use std::io::{self, IsTerminal, Write};
+use std::sync::Mutex;
+use std::time::{Duration, Instant};
+
+const WIDTH: usize = 30;
+const BETWEEN_PAINTS: Duration = Duration::from_millis(100);
+
+/// Watches a run and paints how far it is.
+pub struct Progress {
+    paths: usize,
+    /// Time of the last paint; none where nothing is painted.
+    painted: Option<Mutex<Instant>>,
+}
+
+impl Progress {
+    /// For a run of so many paths; silent when asked, or where standard error is no terminal.
+    pub fn new(paths: usize, is_silent: bool) -> Self {
+        let is_painted = !is_silent && io::stderr().is_terminal();
+        Self { paths, painted: is_painted.then(|| Mutex::new(Instant::now())) }
+    }
+
+    /// Wipes the line.
+    pub fn finish(&self) {
+        if self.painted.is_some() {
+            let _ = write!(io::stderr().lock(), "\r\x1b[2K");
+        }
+    }
+}
+
+impl Watcher for Progress {
+    fn progress(&self, run: &Run) {
+        // A paint that finds another at work is left out.
+        let Some(Ok(mut painted)) = self.painted.as_ref().map(Mutex::try_lock) else { return };
+        if painted.elapsed() < BETWEEN_PAINTS {
+            return;
+        }
+        *painted = Instant::now();
+        let mut err = io::stderr().lock();
+        let _ = write!(err, "\r{}", bar(run.paths(), self.paths)).and_then(|()| err.flush());
+    }
+
+    fn is_stopped(&self) -> bool {
+        false
+    }
+}
+
+fn bar(done: usize, paths: usize) -> String {
+    let filled = (WIDTH * done) / paths.max(1);
+    format!("{}{} {done} of {paths} paths", "=".repeat(filled), "-".repeat(WIDTH - filled.min(WIDTH)))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::bar;
+
+    #[test]
+    fn exact_bar_fills_with_the_paths() {
+        assert_eq!(bar(0, 100), format!("{} 0 of 100 paths", "-".repeat(30)));
+        assert_eq!(bar(50, 100), format!("{}{} 50 of 100 paths", "=".repeat(15), "-".repeat(15)));
+        assert_eq!(bar(100, 100), format!("{} 100 of 100 paths", "=".repeat(30)));
+    }
+}

@@ -1,0 +1,7 @@
+//! The house rules, held by reading manifests, `use` lines and opening words. What the compiler already holds
+//! (the engine can't see the program) is not checked again.
+
+mod house;
+mod papers;
+mod rules;
+mod source;
