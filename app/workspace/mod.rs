@@ -6,5 +6,26 @@ pub mod document;
 /// How the window looks at a document.
 pub mod view;
 
-pub use document::{Document, Settings};
+pub use document::{Document, LONGEST_HORIZON_DAYS, Settings};
+use std::path::PathBuf;
 pub use view::{BookColumn, BookOrder, Tab, Theme, View};
+
+/// Everything needed to see the same figures again.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Workspace {
+    /// The book and its settings.
+    pub document: Document,
+    /// How it was looked at.
+    pub view: View,
+}
+
+/// A session as it is kept against a crash.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Kept {
+    /// What it was about.
+    pub workspace: Workspace,
+    /// Where it was last saved or opened from.
+    pub file: Option<PathBuf>,
+    /// Whether it differs from what stands there.
+    pub has_unsaved_edits: bool,
+}

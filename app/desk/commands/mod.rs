@@ -16,5 +16,5 @@ pub mod words;
 
 pub use change::{HoldingChange, Parameter, SettingChange};
 pub use command::Command;
-pub use export::{ExportFigure, ExportKind, PathPurpose};
+pub use export::{ExportFigure, ExportKind, PathPurpose, file_stem};
 pub use queue::Queue;

@@ -3,6 +3,9 @@
 use super::Command;
 
 /// What the panels have pushed in this frame.
+///
+/// A panel need not say where a drag begins and ends: edits of the same thing that come while the pointer is held
+/// down are one undo step, and the step ends with the frame in which it is up again.
 #[derive(Debug, Default)]
 pub struct Queue {
     commands: Vec<Command>,

@@ -2,7 +2,7 @@
 //! Filled by the worker's answers; panels only read.
 
 use ebbmark_engine::factors::Model;
-use ebbmark_engine::measures::{Bands, Density, Reading};
+use ebbmark_engine::measures::{Bands, Conventions, Density, Reading};
 use std::sync::Arc;
 
 /// Where the run stands.
@@ -24,6 +24,8 @@ pub enum RunState {
 pub struct AtLine {
     /// The day read.
     pub day: u32,
+    /// How it was read.
+    pub conventions: Conventions,
     /// All figures.
     pub reading: Reading,
     /// Distribution of the book's value.
@@ -55,4 +57,16 @@ pub struct Live {
     pub paths_done: usize,
     /// Seconds since the run began, or that it took.
     pub seconds: f64,
+}
+
+impl Live {
+    /// The day nearest to `day` on which the line can stop; the earlier of two. Before a model is known, `day` itself.
+    pub fn nearest_day(&self, day: u32) -> u32 {
+        self.days.iter().copied().min_by_key(|kept| kept.abs_diff(day)).unwrap_or(day)
+    }
+
+    /// How much of the run is done, 0 to 1.
+    pub fn share_done(&self, paths: usize) -> f32 {
+        (self.paths_done as f32 / paths.max(1) as f32).min(1.0)
+    }
 }

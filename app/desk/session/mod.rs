@@ -1,14 +1,20 @@
 //! What the window shows and how commands change it. Starts no thread, touches no file, paints nothing:
 //! a command that needs those leaves a request for the worker.
 
+/// The worker's answers.
+mod answers;
+/// Commands.
+mod apply;
+/// Edits as functions from document to document.
+pub mod edits;
 /// Figures of the current inputs, as far as they have arrived.
 pub mod live;
 /// Edits that can be taken back.
 pub mod undo;
 
-use super::commands::PathPurpose;
+use super::commands::{ExportKind, PathPurpose};
 use super::notices::{Notices, Refusal};
-use crate::workspace::{Document, View};
+use crate::workspace::{Document, Kept, View};
 use ebbmark_engine::tables::Fault;
 pub use live::{AtLine, Live, RunState};
 use std::path::PathBuf;
@@ -28,9 +34,31 @@ pub struct Session {
     notices: Notices,
     refusal: Option<Refusal>,
     path_field: Option<PathPurpose>,
+    waiting_exports: Vec<(ExportKind, PathBuf)>,
+    asked_generation: u64,
 }
 
 impl Session {
+    /// A session with a document that was kept, opened or built in.
+    pub fn new(kept: Kept) -> Self {
+        let Kept { workspace, file, has_unsaved_edits } = kept;
+        let document = Arc::new(workspace.document);
+        Self {
+            saved: (!has_unsaved_edits).then(|| Arc::clone(&document)),
+            document,
+            view: workspace.view,
+            file,
+            undo: UndoStack::default(),
+            live: Live::default(),
+            faults: Vec::new(),
+            notices: Notices::default(),
+            refusal: None,
+            path_field: None,
+            waiting_exports: Vec::new(),
+            asked_generation: 0,
+        }
+    }
+
     /// The book and its settings.
     pub fn document(&self) -> &Document {
         &self.document
@@ -51,9 +79,24 @@ impl Session {
         &self.faults
     }
 
+    /// Where the reading line stands: the day nearest to the one set at which the paths can be read.
+    pub fn reading_day(&self) -> u32 {
+        self.live.nearest_day(self.document.settings.reading_day)
+    }
+
     /// Messages.
     pub fn notices(&self) -> &Notices {
         &self.notices
+    }
+
+    /// Messages, to tell something from outside the session.
+    pub fn notices_mut(&mut self) -> &mut Notices {
+        &mut self.notices
+    }
+
+    /// Refuses files, with everything wrong with them.
+    pub fn refuse(&mut self, refusal: Refusal) {
+        self.refusal = Some(refusal);
     }
 
     /// Files that were last refused.

@@ -3,6 +3,7 @@
 //! Every change of the document is a step, moves of the reading line among them; consecutive changes of the same
 //! thing within one gesture (while the pointer is held down) are one step.
 
+use crate::desk::commands::Command;
 use crate::workspace::Document;
 use std::mem::Discriminant;
 use std::path::PathBuf;
@@ -20,13 +21,25 @@ pub struct State {
     pub file: Option<PathBuf>,
 }
 
-/// Tells whether two edits in a row change the same thing.
+/// What an edit changes, whatever it sets it to: two edits of one gesture with the same target are one step.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub struct Target {
-    /// The command.
-    pub command: Discriminant<super::super::commands::Command>,
-    /// What it changes, by rows and names.
-    pub what: String,
+    command: Discriminant<Command>,
+    row: Option<usize>,
+    words: String,
+}
+
+impl Target {
+    /// The target of a command.
+    pub fn of(command: &Command) -> Self {
+        let row = match command {
+            Command::RemoveHolding { row }
+            | Command::ChangeHolding { row, .. }
+            | Command::SetExposure { row, .. } => Some(*row),
+            _ => None,
+        };
+        Self { command: std::mem::discriminant(command), row, words: command.text() }
+    }
 }
 
 #[derive(Debug, Clone)]

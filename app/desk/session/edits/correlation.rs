@@ -1,0 +1,70 @@
+//! Edits of the correlation table, which stays symmetric. Whether it is semi-definite is for the engine to say.
+
+use super::{factors, holdings};
+use ebbmark_engine::factors::{CorrelationTable, Inputs, Model};
+
+/// Sets the correlation of two different factors, -1 to 1; factors the table did not have join it uncorrelated.
+pub fn set(inputs: &mut Inputs, model: Option<&Model>, pair: [&String; 2], value: f64) -> Option<()> {
+    if pair[0] == pair[1] || !(-1.0..=1.0).contains(&value) {
+        return None;
+    }
+    pair.into_iter().for_each(|factor| factors::straighten(inputs, model, factor));
+    let table =
+        inputs.correlation.get_or_insert_with(|| CorrelationTable { names: Vec::new(), cells: Vec::new() });
+    let [row, column] = pair.map(|name| place(table, name));
+    let size = table.names.len();
+    table.cells[row * size + column] = value;
+    table.cells[column * size + row] = value;
+    Some(())
+}
+
+/// Row of a factor, added where it has none.
+fn place(table: &mut CorrelationTable, name: &str) -> usize {
+    if let Some(row) = table.names.iter().position(|known| known == name) {
+        return row;
+    }
+    let old = table.names.len();
+    let size = old + 1;
+    let cell = |row: usize, column: usize| match (row < old, column < old) {
+        (true, true) => table.cells[row * old + column],
+        _ => f64::from(u8::from(row == column)),
+    };
+    let cells = (0..size * size).map(|at| cell(at / size, at % size)).collect();
+    table.cells = cells;
+    table.names.push(name.to_owned());
+    old
+}
+
+/// Takes factors out of the table that nothing else names any more.
+pub fn forget_unnamed(inputs: &mut Inputs, names: &[String]) {
+    for name in names {
+        if !holdings::is_factor_known(inputs, name)
+            && let Some(table) = &mut inputs.correlation
+        {
+            remove(table, name);
+        }
+    }
+}
+
+fn remove(table: &mut CorrelationTable, name: &str) {
+    let Some(gone) = table.names.iter().position(|known| known == name) else { return };
+    let size = table.names.len();
+    let mut at = 0;
+    table.cells.retain(|_| {
+        let kept = at / size != gone && at % size != gone;
+        at += 1;
+        kept
+    });
+    table.names.remove(gone);
+}
+
+/// Renames a factor whose shocks are now counted the other way round: its correlations change sign.
+pub fn turn(table: &mut CorrelationTable, old: &str, new: &str) {
+    let Some(turned) = table.names.iter().position(|known| known == old) else { return };
+    let size = table.names.len();
+    new.clone_into(&mut table.names[turned]);
+    for other in (0..size).filter(|other| *other != turned) {
+        table.cells[turned * size + other] *= -1.0;
+        table.cells[other * size + turned] *= -1.0;
+    }
+}
