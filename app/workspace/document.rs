@@ -55,6 +55,24 @@ pub struct Settings {
 }
 
 impl Settings {
+    /// What is usual where nothing is known: a year ahead, read at a month.
+    pub fn usual() -> Self {
+        Self {
+            book_currency: None,
+            days_per_year: 252.0,
+            as_of: None,
+            capital: None,
+            loss_limit: None,
+            loss_from: LossFrom::Today,
+            confidences: vec![Confidence::NINETY_FIVE, Confidence::NINETY_NINE],
+            chosen_confidence: Confidence::NINETY_NINE,
+            paths: 100_000,
+            seed: 1,
+            horizon_days: 252,
+            reading_day: 21,
+        }
+    }
+
     /// How a sample is read under these settings.
     pub fn conventions(&self) -> Conventions {
         Conventions {

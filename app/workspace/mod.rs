@@ -5,10 +5,22 @@
 pub mod document;
 /// How the window looks at a document.
 pub mod view;
+/// Workspaces and kept sessions as text.
+pub mod format;
+/// Files that are never half written.
+pub mod whole;
+/// Workspaces as files.
+pub mod files;
+/// The session that survives a crash.
+pub mod recovery;
 
 pub use document::{Document, LONGEST_HORIZON_DAYS, Settings};
+pub use files::{EXTENSION, WorkspaceError, is_workspace, read, write};
+pub use format::{FORMAT, FormatError};
+pub use recovery::{Beginning, Slot, state_folder};
 use std::path::PathBuf;
 pub use view::{BookColumn, BookOrder, Tab, Theme, View};
+pub use whole::write_whole;
 
 /// Everything needed to see the same figures again.
 #[derive(Debug, Clone, PartialEq)]

@@ -31,6 +31,11 @@ pub enum ConfidenceError {
 }
 
 impl Confidence {
+    /// 95 %.
+    pub const NINETY_FIVE: Self = Self { numerator: 95, decimals: 2 };
+    /// 99 %.
+    pub const NINETY_NINE: Self = Self { numerator: 99, decimals: 2 };
+
     /// Nearest double.
     pub fn value(self) -> f64 {
         self.numerator as f64 / self.denominator() as f64

@@ -32,7 +32,7 @@ pub fn change(settings: &mut Settings, change: &SettingChange) -> Option<()> {
 
 fn set_confidences(settings: &mut Settings, levels: &[Confidence]) -> Option<()> {
     let mut levels = levels.to_vec();
-    levels.sort_unstable_by(|a, b| a.value().total_cmp(&b.value()));
+    levels.sort_unstable();
     levels.dedup();
     let distance = |level: &Confidence| (level.value() - settings.chosen_confidence.value()).abs();
     let nearest = levels.iter().copied().min_by(|a, b| distance(a).total_cmp(&distance(b)))?;
@@ -45,7 +45,7 @@ fn choose_confidence(settings: &mut Settings, level: Confidence) {
     settings.chosen_confidence = level;
     if !settings.confidences.contains(&level) {
         settings.confidences.push(level);
-        settings.confidences.sort_unstable_by(|a, b| a.value().total_cmp(&b.value()));
+        settings.confidences.sort_unstable();
     }
 }
 

@@ -1,0 +1,10 @@
+//! The window without a screen: sessions, commands, undo, the worker, workspaces; then the window by its labels.
+
+/// A small book, and ways to wait for the worker.
+mod support;
+/// Edits of holdings, factors, correlations and settings.
+mod edits;
+/// Steps back and forth.
+mod undo;
+/// Workspaces and kept sessions.
+mod kept;
