@@ -18,25 +18,25 @@ pub struct SampleMoments {
     pub skewness_error: Option<f64>,
 }
 
-/// Moments of a sample; none of an empty one. A sample of equal values has an sd of exactly 0.
-pub fn sample_moments(sample: &[f64]) -> Option<SampleMoments> {
-    let n = sample.len() as f64;
-    let (mean, [m2, m3, m4]) = central_moments(sample)?;
+/// Moments of a sample. One of equal values has an sd of exactly 0; an empty one has moments of 0.
+pub fn sample_moments(sample: &[f64]) -> SampleMoments {
+    let n = count(sample);
+    let (mean, [m2, m3, m4]) = central_moments(sample);
     let sd = m2.sqrt();
     let sd_error = if sd > 0.0 { ((m4 - m2 * m2).max(0.0) / (4.0 * m2 * n)).sqrt() } else { 0.0 };
-    Some(SampleMoments {
+    SampleMoments {
         mean: Estimate { value: mean, standard_error: sd / n.sqrt() },
         sd: Estimate { value: sd, standard_error: sd_error },
         skewness: (sd > 0.0).then(|| m3 / (m2 * sd)),
         skewness_error: skewness_error(sample),
-    })
+    }
 }
 
 /// Mean, and second to fourth central moments. Deviations are taken from the first value before the mean is known, so
 /// that nothing is lost to a large common part.
-fn central_moments(sample: &[f64]) -> Option<(f64, [f64; 3])> {
-    let pivot = *sample.first()?;
-    let n = sample.len() as f64;
+fn central_moments(sample: &[f64]) -> (f64, [f64; 3]) {
+    let pivot = sample.first().copied().unwrap_or(0.0);
+    let n = count(sample);
     let shift = sample.iter().map(|value| value - pivot).sum::<f64>() / n;
     let mut sums = [0.0; 3];
     for value in sample {
@@ -46,7 +46,12 @@ fn central_moments(sample: &[f64]) -> Option<(f64, [f64; 3])> {
         sums[1] += square * deviation;
         sums[2] += square * square;
     }
-    Some((pivot + shift, sums.map(|sum| sum / n)))
+    (pivot + shift, sums.map(|sum| sum / n))
+}
+
+/// Number of values, 1 for an empty sample.
+fn count(sample: &[f64]) -> f64 {
+    sample.len().max(1) as f64
 }
 
 /// Standard deviation of the groups' skewness over the root of their number; none where a group has no skewness.
@@ -54,10 +59,10 @@ fn skewness_error(sample: &[f64]) -> Option<f64> {
     let edge = |group: usize| group * sample.len() / SKEWNESS_GROUPS;
     let skews: Option<Vec<f64>> = (0..SKEWNESS_GROUPS)
         .map(|group| {
-            let (_, [m2, m3, _]) = central_moments(&sample[edge(group)..edge(group + 1)])?;
+            let (_, [m2, m3, _]) = central_moments(&sample[edge(group)..edge(group + 1)]);
             (m2 > 0.0).then(|| m3 / (m2 * m2.sqrt()))
         })
         .collect();
-    let (_, [variance, ..]) = central_moments(&skews?)?;
+    let (_, [variance, ..]) = central_moments(&skews?);
     Some((variance / (SKEWNESS_GROUPS as f64 - 1.0)).sqrt())
 }

@@ -32,6 +32,12 @@ impl Multidual {
         self.coefficients[self.sets() - 1]
     }
 
+    /// `factor x self`.
+    pub fn scaled(mut self, factor: f64) -> Self {
+        self.coefficients.iter_mut().for_each(|c| *c *= factor);
+        self
+    }
+
     /// `exp(self)`.
     pub fn exp(&self) -> Self {
         let mut whole = self.exp_m1();
@@ -41,6 +47,11 @@ impl Multidual {
 
     /// `exp(self) - 1`, all digits kept for a small real part.
     pub fn exp_m1(&self) -> Self {
+        if self.symbols == 0 {
+            let mut real = *self;
+            real.coefficients[0] = self.coefficients[0].exp_m1();
+            return real;
+        }
         let mut nilpotent = *self;
         nilpotent.coefficients[0] = 0.0;
         // exp of the nilpotent part, by Horner; powers above the number of symbols vanish.

@@ -41,6 +41,11 @@ impl Confidence {
         self.numerator as f64 / self.denominator() as f64
     }
 
+    /// `1 - c`, nearest double.
+    pub fn tail(self) -> f64 {
+        (self.denominator() - self.numerator) as f64 / self.denominator() as f64
+    }
+
     /// `ceil(n c)` in whole numbers: the ascending rank of the order statistic that is the quantile of `n` values.
     pub fn rank(self, n: usize) -> usize {
         let product = n as u128 * u128::from(self.numerator);

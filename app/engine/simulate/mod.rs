@@ -19,4 +19,4 @@ pub use block::InstructionSet;
 pub use plan::{Plan, SimulateError};
 pub use random::Stream;
 pub use run::{DaySample, Run, Unwatched, Watcher, draw_again, run, run_with};
-pub use transition::Transition;
+pub use transition::{Transition, factor_move, move_covariance, move_means};

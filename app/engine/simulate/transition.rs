@@ -1,8 +1,8 @@
 //! The exact joint Gaussian transition of all factors over a step of any length. Draws nothing.
 
 use super::SimulateError;
-use crate::factors::{Diffusion, Model};
-use crate::maths::cholesky;
+use crate::factors::{Diffusion, Model, RiskFactor};
+use crate::maths::{cholesky, decay_integral};
 
 /// How the moves `x` of the modelled variables since today (`ln S/S_0`, or `X - X_0`) go over one step:
 ///
@@ -34,29 +34,32 @@ impl Transition {
     /// # Errors
     /// [`SimulateError::NotSemiDefinite`] where the integrated covariance can't be factored in the factors' order.
     pub fn over(model: &Model, years: f64) -> Result<Self, SimulateError> {
-        let speeds: Vec<f64> =
-            model.factors.iter().map(|factor| factor.diffusion.speed_per_year(model.days_per_year)).collect();
-        let covariance = integrated_covariance(model, &speeds, years);
+        let speeds = speeds_per_year(model);
+        let covariance = move_covariance(model, years);
         let lower = cholesky::factor(speeds.len(), &covariance).map_err(|failure| {
             SimulateError::NotSemiDefinite {
                 factor: model.factors[failure.pivot].name.clone(),
                 pivot: failure.value,
             }
         })?;
-        let shift = model.factors.iter().zip(&speeds).map(|(factor, speed)| match factor.diffusion {
-            Diffusion::Geometric { drift, volatility } => (drift - volatility * volatility / 2.0) * years,
-            _ => factor.gap_to_long_run() * -(-speed * years).exp_m1(),
-        });
         Ok(Self {
             decay: speeds.iter().map(|speed| (-speed * years).exp()).collect(),
-            shift: shift.collect(),
+            shift: move_means(model, years),
             covariance,
             lower,
         })
     }
 }
 
-fn integrated_covariance(model: &Model, speeds: &[f64], years: f64) -> Vec<f64> {
+/// Mean of each factor's move from today over `years`: `shift` of [`Transition`].
+pub fn move_means(model: &Model, years: f64) -> Vec<f64> {
+    let means = model.factors.iter().map(|factor| factor_move(factor, model.days_per_year, years).0);
+    means.collect()
+}
+
+/// Covariance of the factors' moves from today over `years`: `Q` of [`Transition`], n x n, row per factor.
+pub fn move_covariance(model: &Model, years: f64) -> Vec<f64> {
+    let speeds = speeds_per_year(model);
     let sigmas: Vec<f64> = model.factors.iter().map(|factor| factor.diffusion.volatility()).collect();
     let n = speeds.len();
     (0..n * n)
@@ -68,7 +71,17 @@ fn integrated_covariance(model: &Model, speeds: &[f64], years: f64) -> Vec<f64> 
         .collect()
 }
 
-/// `phi(c, t) = integral of exp(-c u) over [0, t]`. `expm1` keeps all digits for a tiny `c t`.
-fn decay_integral(rate: f64, years: f64) -> f64 {
-    if rate == 0.0 { years } else { -(-rate * years).exp_m1() / rate }
+/// Mean and variance of one factor's move from today over `years`.
+pub fn factor_move(factor: &RiskFactor, days_per_year: f64, years: f64) -> (f64, f64) {
+    let speed = factor.diffusion.speed_per_year(days_per_year);
+    let sigma = factor.diffusion.volatility();
+    let mean = match factor.diffusion {
+        Diffusion::Geometric { drift, volatility } => (drift - volatility * volatility / 2.0) * years,
+        _ => factor.gap_to_long_run() * -(-speed * years).exp_m1(),
+    };
+    (mean, sigma * sigma * decay_integral(2.0 * speed, years))
+}
+
+fn speeds_per_year(model: &Model) -> Vec<f64> {
+    model.factors.iter().map(|factor| factor.diffusion.speed_per_year(model.days_per_year)).collect()
 }
