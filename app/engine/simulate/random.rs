@@ -16,7 +16,7 @@ pub(super) const BRIDGE_LANE: u32 = 0x8000_0000;
 /// First of the lanes that subdivide the first day.
 pub(super) const FIRST_DAY_LANE: u32 = 0x8000_0001;
 
-/// Ten rounds on `L` counters at once. Words are 32 bits wide, kept in 64-bit lanes.
+/// Ten rounds on `L` counters at once. A word is the low half of its 64-bit lane; what stands above it is of no meaning.
 #[inline(always)]
 pub(super) fn philox<const L: usize>(counter: [[u64; L]; 4], seed: u64) -> [[u64; L]; 4] {
     let mut words = counter;
@@ -28,9 +28,9 @@ pub(super) fn philox<const L: usize>(counter: [[u64; L]; 4], seed: u64) -> [[u64
             let left = MULTIPLIERS[0] * (a & LOW_WORD);
             let right = MULTIPLIERS[1] * (c & LOW_WORD);
             words[0][lane] = (right >> 32) ^ b ^ first;
-            words[1][lane] = right & LOW_WORD;
+            words[1][lane] = right;
             words[2][lane] = (left >> 32) ^ d ^ second;
-            words[3][lane] = left & LOW_WORD;
+            words[3][lane] = left;
         }
         keys = [keys[0].wrapping_add(KEY_BUMPS[0]), keys[1].wrapping_add(KEY_BUMPS[1])];
     }
@@ -53,7 +53,7 @@ fn unit_interval<const L: usize>(low: &[u64; L], high: &[u64; L]) -> [f64; L] {
     const BELOW_ONE: f64 = 1.0 - f64::EPSILON / 2.0;
     let mut uniform = [0.0; L];
     for lane in 0..L {
-        let bits = (low[lane] | (high[lane] << 32)) >> 12;
+        let bits = ((low[lane] & LOW_WORD) | (high[lane] << 32)) >> 12;
         uniform[lane] = f64::from_bits(bits | ONE) - BELOW_ONE;
     }
     uniform
@@ -107,7 +107,8 @@ mod tests {
     use super::*;
 
     fn check(counter: [u64; 4], seed: u64, expected: [u64; 4]) {
-        assert_eq!(philox(counter.map(|word| [word; 3]), seed), expected.map(|word| [word; 3]));
+        let words = philox(counter.map(|word| [word; 3]), seed);
+        assert_eq!(words.map(|word| word.map(|lane| lane & LOW_WORD)), expected.map(|word| [word; 3]));
     }
 
     /// Known answers of the generator's authors (recomputed).

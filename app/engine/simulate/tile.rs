@@ -15,10 +15,9 @@ pub(super) struct Tile<'a> {
     moves: Vec<Lanes>,
     /// Growth `exp(x)` of log factors, the move itself of level factors.
     growth: Vec<Lanes>,
-    /// Normals on the way in, sensitivities of the book on the way out.
+    /// Normals, then shocks, on the way in; sensitivities of the book on the way out. One room for all three keeps a
+    /// tile within the first-level cache.
     scratch: Vec<Lanes>,
-    /// Correlated normals.
-    shocks: Vec<Lanes>,
     /// The book's value.
     pub(super) value: Lanes,
     /// Its variance over a day from here, by each path's own state.
@@ -36,8 +35,7 @@ impl<'a> Tile<'a> {
             paths: [0; LANES],
             moves: rows.clone(),
             growth: rows.clone(),
-            scratch: rows.clone(),
-            shocks: rows,
+            scratch: rows,
             value: Lanes::splat(0.0),
             variance: Lanes::splat(0.0),
             falls: Falls::from(program.today),
@@ -61,7 +59,7 @@ impl<'a> Tile<'a> {
     #[inline(always)]
     pub(super) fn step<S: Simd>(&mut self, simd: S, day: u32) {
         self.draw(day);
-        self.program.lower.multiply(simd, &self.scratch, &mut self.shocks);
+        self.program.lower.multiply_in_place(simd, &mut self.scratch);
         self.move_factors();
         let (from, variance_before) = (self.value, self.variance);
         self.value_book(simd, day);
@@ -79,12 +77,13 @@ impl<'a> Tile<'a> {
 
     #[inline(always)]
     fn move_factors(&mut self) {
-        let states = self.moves.iter_mut().zip(&mut self.growth).zip(&self.shocks);
+        let states = self.moves.iter_mut().zip(&mut self.growth).zip(&self.scratch);
         for (factor, ((moves, growth), shock)) in self.program.factors.iter().zip(states) {
-            for lane in 0..LANES {
-                moves.0[lane] = factor.decay.mul_add(moves.0[lane], factor.shift + shock.0[lane]);
-            }
-            *growth = if factor.is_log { Lanes::each(|lane| exp(moves.0[lane])) } else { *moves };
+            let before = *moves;
+            let after =
+                Lanes::each(|lane| factor.decay.mul_add(before.0[lane], factor.shift + shock.0[lane]));
+            *moves = after;
+            *growth = if factor.is_log { Lanes::each(|lane| exp(after.0[lane])) } else { after };
         }
     }
 
@@ -109,14 +108,14 @@ impl<'a> Tile<'a> {
         });
         let mut local = Lanes::splat(part.income_per_year.mul_add(years, part.constant));
         for term in &part.terms {
-            let growth = &self.growth[term.factor].0;
-            let sensitivity = &mut self.scratch[term.factor].0;
-            let is_log = self.program.factors[term.factor].is_log;
-            for lane in 0..LANES {
-                let worth = term.weight * growth[lane];
-                local.0[lane] += worth;
-                sensitivity[lane] += rate.0[lane] * if is_log { worth } else { term.weight };
-            }
+            let growth = self.growth[term.factor];
+            let worth = Lanes::each(|lane| term.weight * growth.0[lane]);
+            local = Lanes::each(|lane| local.0[lane] + worth.0[lane]);
+            let slope =
+                if self.program.factors[term.factor].is_log { worth } else { Lanes::splat(term.weight) };
+            let before = self.scratch[term.factor];
+            self.scratch[term.factor] =
+                Lanes::each(|lane| rate.0[lane].mul_add(slope.0[lane], before.0[lane]));
         }
         for lane in 0..LANES {
             self.value.0[lane] = rate.0[lane].mul_add(local.0[lane], self.value.0[lane]);

@@ -47,13 +47,14 @@ impl Triangle {
         Self { strips: (0..n).step_by(ROWS).map(strip).collect() }
     }
 
-    /// `product = matrix x input`, one column of paths a row. `product` has room for whole strips.
+    /// `rows = matrix x rows` for a lower triangle, from the last strip up: what a strip overwrites, no strip above it
+    /// needs. `rows` has room for whole strips.
     #[inline(always)]
-    pub(super) fn multiply<S: Simd>(&self, simd: S, input: &[Lanes], product: &mut [Lanes]) {
-        for (strip, rows) in self.strips.iter().zip(product.as_chunks_mut::<ROWS>().0) {
+    pub(super) fn multiply_in_place<S: Simd>(&self, simd: S, rows: &mut [Lanes]) {
+        for (number, strip) in self.strips.iter().enumerate().rev() {
             for first in (0..LANES / S::F64_LANES).step_by(VECTORS) {
-                let sums = strip.product(simd, input, first);
-                for (row, sum) in rows.iter_mut().zip(sums) {
+                let sums = strip.product(simd, rows, first);
+                for (row, sum) in rows[number * ROWS..].iter_mut().zip(sums) {
                     let vectors = S::as_mut_simd_f64s(&mut row.0).0;
                     vectors[first..first + VECTORS].copy_from_slice(&sum);
                 }
