@@ -42,6 +42,28 @@ pub enum DiffusionKind {
     RevertingLevel,
 }
 
+impl LevelUnit {
+    /// As written in files.
+    pub fn word(self) -> &'static str {
+        match self {
+            Self::Points => "points",
+            Self::Percent => "percent",
+            Self::Bp => "bp",
+        }
+    }
+}
+
+impl DiffusionKind {
+    /// As written in files.
+    pub fn word(self) -> &'static str {
+        match self {
+            Self::Geometric => "geometric",
+            Self::RevertingLog => "reverting-log",
+            Self::RevertingLevel => "reverting-level",
+        }
+    }
+}
+
 /// Time in which the gap to the long-run level halves.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
 pub enum HalfLife {

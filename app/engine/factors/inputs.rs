@@ -25,6 +25,21 @@ pub struct CorrelationTable {
     pub names: Vec<String>,
     /// n x n, row per factor, both triangles filled.
     pub cells: Vec<f64>,
+    /// Line of each factor's row in the file it came from; empty when it came from none.
+    pub lines: Vec<usize>,
+}
+
+/// Labels of the files that the rows came from, for the places of faults; empty for what was typed in the window.
+#[derive(Debug, Clone, PartialEq, Eq, Default, Serialize, Deserialize)]
+pub struct FileLabels {
+    /// Of the holdings.
+    pub positions: String,
+    /// Of the sensitivities.
+    pub exposures: String,
+    /// Of the factors.
+    pub factors: String,
+    /// Of the correlation.
+    pub correlation: String,
 }
 
 /// Everything that makes a model, by content.
@@ -38,4 +53,6 @@ pub struct Inputs {
     pub factors: Vec<FactorRow>,
     /// `correlation.csv`, where there is one.
     pub correlation: Option<CorrelationTable>,
+    /// Where the rows came from.
+    pub files: FileLabels,
 }

@@ -1,7 +1,10 @@
 //! The checked model of a book: holdings with their values, factors in order, correlation, valuation.
 
-use super::{Correlation, CurrencyPart, RiskFactor, Valuation};
-use crate::tables::Notice;
+use super::descriptions::{self, Described};
+use super::parts::{self, Pricing};
+use super::{Correlation, CurrencyPart, Inputs, RiskFactor, Valuation};
+use super::{currencies, pairing, resolution};
+use crate::tables::{Fault, Faults, Notice, NoticeLevel, Place};
 
 /// What the caller sets about a model beside its inputs.
 #[derive(Debug, Clone, PartialEq)]
@@ -46,4 +49,73 @@ pub struct Model {
     pub value: f64,
     /// What is worth telling about it.
     pub notices: Vec<Notice>,
+}
+
+impl Model {
+    /// Checks inputs as a whole and makes the model of them: factors in order of first appearance (for each holding its
+    /// factor, then its currency's rate; then those of the sensitivities), with their diffusions and their correlation,
+    /// and the book's value as a function of their moves.
+    ///
+    /// # Errors
+    /// Every fault found; those of the correlation only where the factors stand.
+    pub fn assemble(inputs: &Inputs, settings: &ModelSettings) -> Result<Self, Faults> {
+        check_settings(inputs, settings)?;
+        let currency = currencies::book_currency(inputs, settings).map_err(|fault| Faults(vec![fault]))?;
+        let (described, mut faults) = descriptions::gather(inputs, currency.as_deref());
+        let mut notices: Vec<Notice> = described.iter().filter_map(inversion).collect();
+        let mut factors = Vec::with_capacity(described.len());
+        for said in &described {
+            match resolution::resolve(said, &mut notices) {
+                Ok(factor) => factors.push(factor),
+                Err(more) => faults.extend(more),
+            }
+        }
+        if !faults.is_empty() {
+            return Err(Faults(faults));
+        }
+        let pricing = Pricing { inputs, factors: &factors, book_currency: currency.as_deref() };
+        let correlation = pairing::pair_up(inputs, &factors, &mut notices);
+        let (holdings, correlation) = match (pricing.holdings(), correlation) {
+            (Ok(holdings), Ok(correlation)) => (holdings, correlation),
+            (holdings, correlation) => {
+                let faults =
+                    [holdings.err().unwrap_or_default(), correlation.err().unwrap_or_default()].concat();
+                return Err(Faults(faults));
+            }
+        };
+        notices.extend(parts::notices(inputs));
+        let valuation = Valuation::sum(holdings.iter().map(|holding| &holding.part));
+        let is_log: Vec<bool> = factors.iter().map(|factor| factor.diffusion.is_log()).collect();
+        let value = valuation.value(&is_log, &vec![0.0; factors.len()], 0.0);
+        let days_per_year = settings.days_per_year;
+        Ok(Self { currency, days_per_year, factors, correlation, holdings, valuation, value, notices })
+    }
+
+    /// Years from today to a day.
+    pub fn years(&self, day: u32) -> f64 {
+        f64::from(day) / self.days_per_year
+    }
+}
+
+fn check_settings(inputs: &Inputs, settings: &ModelSettings) -> Result<(), Faults> {
+    let fault = |found: String, expected: &str| {
+        let place = Place { file: inputs.files.positions.clone(), line: None, column: None };
+        Err(Faults(vec![Fault { place, found, expected: expected.to_owned() }]))
+    };
+    if !(settings.days_per_year > 0.0 && settings.days_per_year.is_finite()) {
+        return fault(format!("{} trading days a year", settings.days_per_year), "a number above 0");
+    }
+    if inputs.holdings.is_empty() {
+        return fault("no holding".to_owned(), "at least one");
+    }
+    Ok(())
+}
+
+fn inversion(said: &Described) -> Option<Notice> {
+    let given = currencies::inverse(&said.name).filter(|_| said.is_inverted)?;
+    let text = format!(
+        "{given} is read inverted, as {}: level, drift, long run and correlations are turned.",
+        said.name
+    );
+    Some(Notice { level: NoticeLevel::Info, text })
 }

@@ -47,3 +47,47 @@ pub struct Valuation {
     /// Parts.
     pub parts: Vec<CurrencyPart>,
 }
+
+impl Valuation {
+    /// The book as the sum of its holdings' parts: currencies in order of first appearance.
+    pub(super) fn sum<'a>(parts: impl IntoIterator<Item = &'a CurrencyPart>) -> Self {
+        let mut sum = Self { parts: Vec::new() };
+        for part in parts {
+            match sum.parts.iter_mut().find(|known| known.rate == part.rate) {
+                Some(known) => known.add(part),
+                None => sum.parts.push(part.clone()),
+            }
+        }
+        sum
+    }
+
+    /// Value `years` from today after these moves `x`, one a factor; `is_log` tells which factors are log factors.
+    pub fn value(&self, is_log: &[bool], moves: &[f64], years: f64) -> f64 {
+        let growth = |factor: usize| if is_log[factor] { moves[factor].exp() } else { moves[factor] };
+        self.parts.iter().fold(0.0, |value, part| {
+            let rate = part.rate.map_or(1.0, |rate| {
+                if is_log[rate.factor] {
+                    rate.today * growth(rate.factor)
+                } else {
+                    rate.today + moves[rate.factor]
+                }
+            });
+            let still = part.income_per_year.mul_add(years, part.constant);
+            let local = part.terms.iter().fold(still, |sum, term| sum + term.weight * growth(term.factor));
+            rate.mul_add(local, value)
+        })
+    }
+}
+
+impl CurrencyPart {
+    pub(super) fn add(&mut self, other: &Self) {
+        self.constant += other.constant;
+        self.income_per_year += other.income_per_year;
+        for term in &other.terms {
+            match self.terms.binary_search_by_key(&term.factor, |known| known.factor) {
+                Ok(at) => self.terms[at].weight += term.weight,
+                Err(at) => self.terms.insert(at, *term),
+            }
+        }
+    }
+}

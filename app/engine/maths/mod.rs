@@ -1,5 +1,7 @@
 //! Pure arithmetic, free of trade words: everything here could serve another program.
 
+/// Eigenvalues of symmetric matrices.
+pub mod eigen;
 /// Cholesky factor of a semi-definite matrix.
 pub mod cholesky;
 /// Largest fall of a Brownian motion.
