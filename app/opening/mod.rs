@@ -87,6 +87,7 @@ impl Parts {
                 exposures: self.exposures.unwrap_or_default(),
                 factors: self.factors.unwrap_or_default(),
                 correlation: self.correlation,
+                files: Default::default(),
             },
             holidays: self.holidays,
             book_currency: None,

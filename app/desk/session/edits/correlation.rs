@@ -9,8 +9,11 @@ pub fn set(inputs: &mut Inputs, model: Option<&Model>, pair: [&String; 2], value
         return None;
     }
     pair.into_iter().for_each(|factor| factors::straighten(inputs, model, factor));
-    let table =
-        inputs.correlation.get_or_insert_with(|| CorrelationTable { names: Vec::new(), cells: Vec::new() });
+    let table = inputs.correlation.get_or_insert_with(|| CorrelationTable {
+        names: Vec::new(),
+        cells: Vec::new(),
+        lines: Vec::new(),
+    });
     let [row, column] = pair.map(|name| place(table, name));
     let size = table.names.len();
     table.cells[row * size + column] = value;
