@@ -51,7 +51,8 @@ pub(crate) fn inputs() -> Inputs {
         holdings: vec![share, rate, holding("Cash", Kind::Cash, 10_000.0, 1.0)],
         exposures: Vec::new(),
         factors: Vec::new(),
-        correlation: Some(CorrelationTable { names, cells: vec![1.0, -0.3, -0.3, 1.0] }),
+        correlation: Some(CorrelationTable { names, cells: vec![1.0, -0.3, -0.3, 1.0], lines: Vec::new() }),
+        ..Inputs::default()
     }
 }
 
