@@ -3,6 +3,8 @@
 
 /// The window.
 pub mod desk;
+/// Commands without a screen.
+pub mod headless;
 /// Files become a book.
 pub mod opening;
 /// What is kept on disk: workspaces, and the session that survives a crash.

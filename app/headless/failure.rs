@@ -40,6 +40,10 @@ impl Failure {
 
 fn list(faults: &Faults) -> String {
     let count = faults.0.len();
-    let head = if count == 1 { "the input is refused:".into() } else { format!("the input is refused, {count} faults:") };
+    let head = if count == 1 {
+        "the input is refused:".into()
+    } else {
+        format!("the input is refused, {count} faults:")
+    };
     format!("{head}\n{faults}")
 }

@@ -9,7 +9,7 @@ const WIDTH: usize = 30;
 const BETWEEN_PAINTS: Duration = Duration::from_millis(100);
 
 /// Watches a run and paints how far it is.
-pub struct Progress {
+pub(super) struct Progress {
     paths: usize,
     /// Time of the last paint; none where nothing is painted.
     painted: Option<Mutex<Instant>>,
@@ -17,13 +17,13 @@ pub struct Progress {
 
 impl Progress {
     /// For a run of so many paths; silent when asked, or where standard error is no terminal.
-    pub fn new(paths: usize, is_silent: bool) -> Self {
+    pub(super) fn new(paths: usize, is_silent: bool) -> Self {
         let is_painted = !is_silent && io::stderr().is_terminal();
         Self { paths, painted: is_painted.then(|| Mutex::new(Instant::now())) }
     }
 
     /// Wipes the line.
-    pub fn finish(&self) {
+    pub(super) fn finish(&self) {
         if self.painted.is_some() {
             let _ = write!(io::stderr().lock(), "\r\x1b[2K");
         }

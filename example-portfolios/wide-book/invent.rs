@@ -95,7 +95,7 @@ struct Factor {
 }
 
 /// The book's files: name and content.
-pub fn files() -> [(&'static str, String); 3] {
+pub(crate) fn files() -> [(&'static str, String); 3] {
     let factors = invent_factors(&mut Stream::new(SEED, 0));
     let positions = invent_positions(&factors, &mut Stream::new(SEED, 1));
     [

@@ -30,7 +30,7 @@ const LIBRARIES_OF_ENGINE: [&str; 9] =
     ["csv", "faer", "jiff", "pulp", "rand", "rayon", "serde", "statrs", "thiserror"];
 
 /// Rule 1: the engine's manifest names only libraries of numbers, dates and text.
-pub fn foreign_libraries_of_engine(manifest: &str) -> Vec<String> {
+pub(super) fn foreign_libraries_of_engine(manifest: &str) -> Vec<String> {
     let section = manifest.split("[dependencies]").nth(1).unwrap_or("");
     let lines = section.lines().take_while(|line| !line.starts_with('['));
     let names = lines.filter_map(|line| line.split(['.', ' ', '=']).next()).filter(|name| !name.is_empty());
@@ -38,12 +38,12 @@ pub fn foreign_libraries_of_engine(manifest: &str) -> Vec<String> {
 }
 
 /// Rule 1: the engine reads no clock, opens no file, prints nothing and has no chance of its own.
-pub fn surroundings_in_engine(sources: &[Source]) -> Vec<String> {
+pub(super) fn surroundings_in_engine(sources: &[Source]) -> Vec<String> {
     holding(sources, "app/engine/", &[], &KEPT_OUT_OF_ENGINE)
 }
 
 /// Rule 2: a room of the engine uses only rooms named above it in `lib.rs`.
-pub fn rooms_out_of_order(order: &[String], sources: &[Source]) -> Vec<String> {
+pub(super) fn rooms_out_of_order(order: &[String], sources: &[Source]) -> Vec<String> {
     let rank = |room: &str| order.iter().position(|named| named == room);
     let mut breaks = Vec::new();
     for source in sources {
@@ -63,7 +63,7 @@ pub fn rooms_out_of_order(order: &[String], sources: &[Source]) -> Vec<String> {
 }
 
 /// Rule 3: what a room of the program must not name.
-pub fn rooms_that_must_not_meet(sources: &[Source]) -> Vec<String> {
+pub(super) fn rooms_that_must_not_meet(sources: &[Source]) -> Vec<String> {
     let mut breaks = Vec::new();
     for (folder, kept_out) in [
         ("app/export/", &["crate::headless", "crate::desk", "crate::opening", "crate::workspace"][..]),
@@ -78,7 +78,7 @@ pub fn rooms_that_must_not_meet(sources: &[Source]) -> Vec<String> {
 }
 
 /// Rule 3: paper is drawn from finished figures and plain results.
-pub fn rooms_behind_paper(sources: &[Source]) -> Vec<String> {
+pub(super) fn rooms_behind_paper(sources: &[Source]) -> Vec<String> {
     let mut breaks = Vec::new();
     for source in sources.iter().filter(|source| source.path.starts_with("app/export/")) {
         for (line, code) in source.code() {
@@ -91,7 +91,7 @@ pub fn rooms_behind_paper(sources: &[Source]) -> Vec<String> {
 }
 
 /// Rule 4: a panel names no other panel.
-pub fn panels_that_meet(sources: &[Source]) -> Vec<String> {
+pub(super) fn panels_that_meet(sources: &[Source]) -> Vec<String> {
     let folder = "app/desk/panels/";
     let name = |source: &Source| {
         let rest = source.path.strip_prefix(folder)?;
@@ -111,22 +111,22 @@ pub fn panels_that_meet(sources: &[Source]) -> Vec<String> {
 }
 
 /// Rule 5: in the program only the worker starts threads.
-pub fn threads_outside_worker(sources: &[Source]) -> Vec<String> {
+pub(super) fn threads_outside_worker(sources: &[Source]) -> Vec<String> {
     holding(sources, "app/", &["app/engine/", "app/desk/worker"], &THREAD_STARTERS)
 }
 
 /// Rule 5: in the window only the theme names colours.
-pub fn colours_outside_theme(sources: &[Source]) -> Vec<String> {
+pub(super) fn colours_outside_theme(sources: &[Source]) -> Vec<String> {
     holding(sources, "app/desk/", &["app/desk/theme"], &COLOUR_NAMES)
 }
 
 /// Rule 5: only the workspace knows RON.
-pub fn ron_outside_workspace(sources: &[Source]) -> Vec<String> {
+pub(super) fn ron_outside_workspace(sources: &[Source]) -> Vec<String> {
     holding(sources, "app/", &["app/workspace/"], &["ron::", "use ron"])
 }
 
 /// Every file opens with words on what lives there.
-pub fn files_without_opening_words(sources: &[Source]) -> Vec<String> {
+pub(super) fn files_without_opening_words(sources: &[Source]) -> Vec<String> {
     const FEWEST_CHARACTERS: usize = 50;
     let silent = sources.iter().filter(|source| source.opening_words().len() < FEWEST_CHARACTERS);
     silent.map(|source| source.path.clone()).collect()

@@ -5,31 +5,31 @@ use std::fs;
 use std::path::{Path, PathBuf};
 
 /// A source file.
-pub struct Source {
+pub(super) struct Source {
     /// From the root of the project, `/` between its parts.
-    pub path: String,
+    pub(super) path: String,
     text: String,
 }
 
 impl Source {
     /// A made-up file, for tests of the rules themselves.
-    pub fn made_up(path: &str, text: &str) -> Self {
+    pub(super) fn made_up(path: &str, text: &str) -> Self {
         Self { path: path.into(), text: text.into() }
     }
 
     /// Lines of code, each with its number, comments taken off.
-    pub fn code(&self) -> impl Iterator<Item = (usize, &str)> {
+    pub(super) fn code(&self) -> impl Iterator<Item = (usize, &str)> {
         self.text.lines().enumerate().map(|(index, line)| (index + 1, without_comment(line)))
     }
 
     /// The `//!` lines that the file opens with, as one text.
-    pub fn opening_words(&self) -> String {
+    pub(super) fn opening_words(&self) -> String {
         let lines = self.text.lines().map_while(|line| line.strip_prefix("//!"));
         lines.map(str::trim).collect::<Vec<_>>().join(" ")
     }
 
     /// The whole text.
-    pub fn text(&self) -> &str {
+    pub(super) fn text(&self) -> &str {
         &self.text
     }
 }
@@ -41,17 +41,17 @@ fn without_comment(line: &str) -> &str {
 }
 
 /// The root of the project.
-pub fn root() -> PathBuf {
+pub(super) fn root() -> PathBuf {
     PathBuf::from(env!("CARGO_MANIFEST_DIR"))
 }
 
 /// Content of a file, from the root; empty where there is none.
-pub fn read(path: &str) -> String {
+pub(super) fn read(path: &str) -> String {
     fs::read_to_string(root().join(path)).unwrap_or_default()
 }
 
 /// All Rust sources below these folders, in order of their paths.
-pub fn sources(folders: &[&str]) -> Vec<Source> {
+pub(super) fn sources(folders: &[&str]) -> Vec<Source> {
     let mut found = Vec::new();
     for folder in folders {
         gather(&root().join(folder), &mut found);

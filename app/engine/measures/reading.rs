@@ -47,6 +47,14 @@ pub struct MomentRow {
     pub standard_error: Option<f64>,
 }
 
+impl MomentRow {
+    /// Sampled less exact in standard errors; none where either is missing or the error is 0.
+    pub fn z(&self) -> Option<f64> {
+        let error = self.standard_error.filter(|error| *error > 0.0)?;
+        Some((self.sampled? - self.exact?) / error)
+    }
+}
+
 /// Moments of the book's value.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize)]
 pub struct MomentsReading {

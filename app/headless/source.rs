@@ -1,0 +1,96 @@
+//! Which book a command reads: the files named by role, a workspace, files told apart by their headers, or the
+//! built-in example; and the settings of the line, which stand above those of a workspace.
+
+use super::arguments::{LossFromName, SettingArguments, SourceArguments};
+use super::failure::Failure;
+use crate::opening::{self, Opened, Role};
+use crate::workspace::{self, Document, Settings};
+use ebbmark_engine::measures::LossFrom;
+use ebbmark_engine::tables::{Faults, Notice};
+use std::path::{Path, PathBuf};
+use std::sync::Arc;
+
+/// A document, and what its readers want told.
+pub(super) type Source = (Document, Vec<Notice>);
+
+/// The book that the line names.
+pub(super) fn from_arguments(arguments: &SourceArguments) -> Result<Source, Failure> {
+    if let Some(path) = &arguments.workspace {
+        return from_workspace(path);
+    }
+    let files = named_files(arguments);
+    if files.is_empty() {
+        return from_example();
+    }
+    Ok(from_opened(opening::read_named(&files)?.into_book()?))
+}
+
+/// The book in files told apart by their headers; the built-in example where there are none.
+pub(super) fn from_files(paths: &[PathBuf]) -> Result<Source, Failure> {
+    match paths {
+        [] => from_example(),
+        [path] if workspace::is_workspace(path) => from_workspace(path),
+        _ => Ok(from_opened(opening::read_files(paths)?.into_book()?)),
+    }
+}
+
+fn from_example() -> Result<Source, Failure> {
+    Ok(from_opened(opening::built_in_example()?))
+}
+
+fn from_workspace(path: &Path) -> Result<Source, Failure> {
+    let workspace = workspace::read(path).map_err(|error| Faults(vec![error.into_fault()]))?;
+    Ok((workspace.document, Vec::new()))
+}
+
+fn from_opened(opened: Opened) -> Source {
+    let Opened { name, inputs, holidays, book_currency, as_of, notices } = opened;
+    let settings = Settings { book_currency, as_of, ..Settings::usual() };
+    let holidays = holidays.map(Arc::new);
+    (Document { name, inputs: Arc::new(inputs), holidays, settings }, notices)
+}
+
+fn named_files(arguments: &SourceArguments) -> Vec<(Role, PathBuf)> {
+    let named = [
+        (Role::Positions, &arguments.positions),
+        (Role::Exposures, &arguments.exposures),
+        (Role::Factors, &arguments.factors),
+        (Role::Correlation, &arguments.correlation),
+        (Role::Holidays, &arguments.holidays),
+    ];
+    named.into_iter().filter_map(|(role, path)| Some((role, path.clone()?))).collect()
+}
+
+/// Puts the settings of the line above those of the document.
+pub(super) fn apply(arguments: &SettingArguments, document: &mut Document) {
+    let settings = &mut document.settings;
+    put(&mut settings.reading_day, arguments.horizon);
+    put(&mut settings.paths, arguments.paths.map(|paths| paths as usize));
+    put(&mut settings.seed, arguments.seed);
+    put(&mut settings.days_per_year, arguments.days_per_year);
+    put(&mut settings.loss_from, arguments.loss_from.map(LossFrom::from));
+    put(&mut settings.as_of, arguments.as_of.map(Some));
+    put(&mut settings.book_currency, arguments.book_currency.clone().map(Some));
+    put(&mut settings.capital, arguments.capital.map(Some));
+    put(&mut settings.loss_limit, arguments.loss_limit.map(Some));
+    if let Some(levels) = &arguments.confidence {
+        settings.confidences = levels.clone();
+        settings.confidences.sort_unstable();
+        settings.confidences.dedup();
+    }
+}
+
+fn put<T>(setting: &mut T, typed: Option<T>) {
+    if let Some(value) = typed {
+        *setting = value;
+    }
+}
+
+impl From<LossFromName> for LossFrom {
+    fn from(name: LossFromName) -> Self {
+        match name {
+            LossFromName::Today => Self::Today,
+            LossFromName::Mean => Self::Mean,
+        }
+    }
+}

@@ -1,0 +1,11 @@
+//! The built program, driven as a person or a script drives it: arguments in, streams and exit code out.
+//! What the figures must be is tested with the engine; here it is how they are asked for and answered.
+
+mod examples;
+mod faults;
+mod figures;
+mod no_display;
+mod options;
+mod schema;
+mod streams;
+mod support;
