@@ -9,7 +9,6 @@ use super::worker::{Request, Worker};
 use std::path::PathBuf;
 
 /// The window's application.
-#[derive(Debug)]
 pub struct App {
     session: Session,
     worker: Worker,

@@ -15,4 +15,11 @@ pub mod theme;
 /// Threads.
 pub mod worker;
 
+/// The window, and what it begins with.
+pub mod start;
+/// Why no window can be had.
+pub mod window_error;
+
 pub use app::App;
+pub use start::open;
+pub use window_error::WindowError;

@@ -167,6 +167,31 @@ fn always_what_can_not_be_taken_edits_nothing() {
 }
 
 #[test]
+fn always_a_row_stays_what_its_kind_says() {
+    let inputs = [
+        change(0, HoldingChange::Price(0.0)),
+        change(0, HoldingChange::Name("Cash".to_owned())),
+        change(0, HoldingChange::Name("  ".to_owned())),
+        change(2, HoldingChange::Price(2.0)),
+    ];
+    for command in inputs {
+        assert_eq!(edited(&document(), None, &command), None, "{command:?}");
+    }
+    let exposure = after(&document(), change(0, HoldingChange::Kind(Kind::Exposure)));
+    assert_eq!(exposure.inputs.holdings[0].quantity, 1.0);
+    assert_eq!(edited(&exposure, None, &change(0, HoldingChange::Quantity(2.0))), None);
+}
+
+#[test]
+fn always_an_added_holding_has_a_name_of_its_own() {
+    let cash = Box::new(holding("Cash", Kind::Cash, 1.0, 1.0));
+    let once = after(&document(), Command::AddHolding(cash.clone()));
+    let twice = after(&once, Command::AddHolding(cash));
+    let names: Vec<&str> = twice.inputs.holdings.iter().map(|holding| holding.name.as_str()).collect();
+    assert_eq!(names, ["Harbour", "Rate", "Cash", "Cash 2", "Cash 3"]);
+}
+
+#[test]
 fn always_the_chosen_confidence_is_one_of_the_levels() {
     let levels = ["0.975", "0.9", "0.975"].map(confidence).to_vec();
     let settings = after(&document(), Command::ChangeSetting(SettingChange::Confidences(levels))).settings;

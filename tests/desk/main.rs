@@ -1,4 +1,5 @@
 //! The window without a screen: sessions, commands, undo, the worker, workspaces; then the window by its labels.
+#![allow(clippy::unwrap_used, reason = "a test that finds nothing fails there")]
 
 /// A small book, and ways to wait for the worker.
 mod support;
@@ -8,3 +9,5 @@ mod edits;
 mod undo;
 /// Workspaces and kept sessions.
 mod kept;
+/// Runs, readings, files.
+mod worker;

@@ -1,12 +1,18 @@
 //! A small invented book, and a session driven without a screen.
 
+use ebbmark::desk::commands::Command;
 use ebbmark::desk::session::Session;
+use ebbmark::desk::worker::{Request, Worker};
 use ebbmark::workspace::{Document, Kept, Settings, View, Workspace};
 use ebbmark_engine::book::{Description, DiffusionKind, HalfLife, Holding, Kind, LevelUnit, TypedFigure};
 use ebbmark_engine::factors::{CorrelationTable, Inputs};
 use std::path::{Path, PathBuf};
 use std::sync::Arc;
 use std::sync::atomic::{AtomicU32, Ordering};
+use std::time::{Duration, Instant};
+
+/// No test waits longer for the worker, even on a loaded machine.
+const LONGEST_WAIT: Duration = Duration::from_secs(60);
 
 pub(crate) fn figure(value: f64) -> Option<TypedFigure> {
     Some(TypedFigure { value, has_percent_sign: false })
@@ -65,6 +71,43 @@ pub(crate) fn document() -> Document {
 pub(crate) fn session() -> Session {
     let workspace = Workspace { document: document(), view: View::default() };
     Session::new(Kept { workspace, file: None, has_unsaved_edits: false })
+}
+
+/// A session with a worker, driven as the window drives it.
+pub(crate) struct Driven {
+    pub(crate) session: Session,
+    worker: Worker,
+}
+
+impl Driven {
+    pub(crate) fn start(mut session: Session) -> Self {
+        let worker = Worker::start(None, || ());
+        worker.ask(session.run());
+        Self { session, worker }
+    }
+
+    /// Applies a command as a gesture of its own.
+    pub(crate) fn apply(&mut self, command: Command) {
+        let requests = self.session.apply(command);
+        self.session.end_gesture();
+        self.ask(requests);
+    }
+
+    /// Takes answers until the session is as wished.
+    pub(crate) fn until(&mut self, what: &str, is_wished: impl Fn(&Session) -> bool) {
+        let began = Instant::now();
+        while !is_wished(&self.session) {
+            assert!(began.elapsed() < LONGEST_WAIT, "waited in vain for {what}");
+            if let Some(answer) = self.worker.wait(Duration::from_millis(100)) {
+                let requests = self.session.take(answer);
+                self.ask(requests);
+            }
+        }
+    }
+
+    fn ask(&self, requests: Vec<Request>) {
+        requests.into_iter().for_each(|request| self.worker.ask(request));
+    }
 }
 
 /// A folder of its own for a test, removed when dropped.

@@ -1,6 +1,7 @@
-//! Keys. A key that a text field is using does not reach here; what a command does is decided elsewhere.
+//! Keys of the commands. What a command does is decided elsewhere.
 
 use super::{Command, PathPurpose};
+use crate::workspace::Tab;
 use egui::{Key, KeyboardShortcut, Modifiers};
 
 const COMMAND_SHIFT: Modifiers = Modifiers::COMMAND.plus(Modifiers::SHIFT);
@@ -18,8 +19,8 @@ pub fn bindings() -> Vec<(KeyboardShortcut, Command)> {
         (with(Modifiers::COMMAND, Key::S), Command::Save),
         (with(Modifiers::COMMAND, Key::D), Command::ToggleTheme),
         (with(Modifiers::COMMAND, Key::R), Command::RunAgain),
-        (with(Modifiers::COMMAND, Key::Num1), Command::ShowTab(crate::workspace::Tab::Horizon)),
-        (with(Modifiers::COMMAND, Key::Num2), Command::ShowTab(crate::workspace::Tab::Correlation)),
+        (with(Modifiers::COMMAND, Key::Num1), Command::ShowTab(Tab::Horizon)),
+        (with(Modifiers::COMMAND, Key::Num2), Command::ShowTab(Tab::Correlation)),
     ]
 }
 
@@ -28,12 +29,15 @@ pub fn shortcut_of(command: &Command) -> Option<KeyboardShortcut> {
     bindings().into_iter().find(|(_, bound)| bound == command).map(|(shortcut, _)| shortcut)
 }
 
-/// Takes the pressed keys out of this frame's input and gives their commands.
+/// Takes the pressed keys out of this frame's input and gives their commands. A text field that is being typed in has
+/// an undo of its own.
 pub fn pressed(ctx: &egui::Context) -> Vec<Command> {
+    let is_typing = ctx.text_edit_focused();
+    let is_heard = |command: &Command| !(is_typing && matches!(command, Command::Undo | Command::Redo));
     ctx.input_mut(|input| {
         bindings()
             .into_iter()
-            .filter(|(shortcut, _)| input.consume_shortcut(shortcut))
+            .filter(|(shortcut, command)| is_heard(command) && input.consume_shortcut(shortcut))
             .map(|(_, command)| command)
             .collect()
     })

@@ -154,11 +154,12 @@ impl Session {
     /// Exports that need wait no longer.
     pub(super) fn due_exports(&mut self) -> Vec<Request> {
         let live = &self.live;
-        let is_settled = matches!(live.state, RunState::Finished | RunState::Stopped);
+        let is_ended = matches!(live.state, RunState::Finished | RunState::Stopped);
         let (Some(model), Some(bands), Some(at_line)) = (&live.model, &live.bands, &live.at_line) else {
             return Vec::new();
         };
-        if !is_settled || live.is_before_edit || !self.line().is_answered_by(at_line) {
+        let is_whole = bands.days.len() == live.days.len() && self.line().is_answered_by(at_line);
+        if !is_ended || live.is_before_edit || !is_whole {
             return Vec::new();
         }
         let request = |(kind, path)| {

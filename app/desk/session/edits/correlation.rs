@@ -35,6 +35,8 @@ fn place(table: &mut CorrelationTable, name: &str) -> usize {
     let cells = (0..size * size).map(|at| cell(at / size, at % size)).collect();
     table.cells = cells;
     table.names.push(name.to_owned());
+    // A table with a row that no file has is no file's any more.
+    table.lines.clear();
     old
 }
 
@@ -59,6 +61,9 @@ fn remove(table: &mut CorrelationTable, name: &str) {
         kept
     });
     table.names.remove(gone);
+    if gone < table.lines.len() {
+        table.lines.remove(gone);
+    }
 }
 
 /// Renames a factor whose shocks are now counted the other way round: its correlations change sign.

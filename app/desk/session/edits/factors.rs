@@ -90,7 +90,7 @@ fn set_level_today(inputs: &mut Inputs, factor: &str, level: f64) -> Option<()> 
     }
     let spots = inputs.holdings.iter().filter(drives(Kind::Spot)).count();
     match inputs.holdings.iter_mut().find(|holding| drives(Kind::Spot)(&&**holding)) {
-        Some(holding) if spots == 1 => holding.price = level,
+        Some(holding) if spots == 1 => holding.price = Some(level).filter(|level| *level > 0.0)?,
         _ => inputs.factors.push(FactorRow { level: Some(level), ..new_row(factor) }),
     }
     Some(())

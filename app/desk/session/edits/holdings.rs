@@ -13,6 +13,15 @@ pub fn factor_of(holding: &Holding) -> Option<&str> {
     }
 }
 
+/// Adds a holding at the end; a name that is taken is given a number.
+pub fn add(inputs: &mut Inputs, holding: &Holding) {
+    let is_taken = |name: &str| inputs.holdings.iter().any(|other| other.name == name);
+    let numbered =
+        |number| if number == 1 { holding.name.clone() } else { format!("{} {number}", holding.name) };
+    let name = (1..).map(numbered).find(|name| !is_taken(name)).unwrap_or_default();
+    inputs.holdings.push(Holding { name, ..holding.clone() });
+}
+
 /// Removes a holding, its sensitivities, and its factor's correlations where nothing else names the factor.
 pub fn remove(inputs: &mut Inputs, row: usize) -> Option<()> {
     inputs.holdings.get(row)?;
@@ -31,7 +40,10 @@ pub fn change(inputs: &mut Inputs, row: usize, change: &HoldingChange) -> Option
         HoldingChange::Kind(kind) => return set_kind(inputs, row, *kind),
         HoldingChange::Price(price) => return set_price(inputs, row, finite(*price)?),
         HoldingChange::Factor(factor) => return set_factor(inputs, row, factor.clone()),
-        HoldingChange::Quantity(quantity) => holding.quantity = finite(*quantity)?,
+        HoldingChange::Quantity(quantity) => {
+            // The quantity of a holding known by its sensitivities is 1.
+            holding.quantity = finite(*quantity).filter(|_| holding.kind != Kind::Exposure)?;
+        }
         HoldingChange::Group(group) => holding.group.clone_from(group),
         HoldingChange::Currency(currency) => holding.currency.clone_from(currency),
         HoldingChange::Multiplier(multiplier) => holding.multiplier = finite(*multiplier)?,
@@ -44,7 +56,8 @@ pub fn change(inputs: &mut Inputs, row: usize, change: &HoldingChange) -> Option
 /// A factor that was named like the holding keeps its name where others know it by it.
 fn rename(inputs: &mut Inputs, row: usize, name: &str) -> Option<()> {
     let name = name.trim();
-    if name.is_empty() {
+    let is_taken = inputs.holdings.iter().enumerate().any(|(at, other)| at != row && other.name == name);
+    if name.is_empty() || is_taken {
         return None;
     }
     let old = std::mem::replace(&mut inputs.holdings[row].name, name.to_owned());
@@ -84,12 +97,15 @@ fn set_kind(inputs: &mut Inputs, row: usize, kind: Kind) -> Option<()> {
 
 /// A level is one for all `level` rows of its factor, and for the factor's own row where that states it.
 fn set_price(inputs: &mut Inputs, row: usize, price: f64) -> Option<()> {
-    if inputs.holdings[row].kind != Kind::Level {
-        inputs.holdings[row].price = price;
-        return Some(());
+    match inputs.holdings[row].kind {
+        Kind::Spot => inputs.holdings[row].price = Some(price).filter(|price| *price > 0.0)?,
+        Kind::Exposure => inputs.holdings[row].price = price,
+        Kind::Level => {
+            let factor = factor_of(&inputs.holdings[row])?.to_owned();
+            set_level(inputs, &factor, price);
+        }
+        Kind::Cash => return None,
     }
-    let factor = factor_of(&inputs.holdings[row])?.to_owned();
-    set_level(inputs, &factor, price);
     Some(())
 }
 

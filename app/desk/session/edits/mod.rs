@@ -28,7 +28,7 @@ pub fn edited(document: &Document, model: Option<&Model>, command: &Command) -> 
 
 fn edit_inputs(inputs: &mut Inputs, model: Option<&Model>, command: &Command) -> Option<()> {
     match command {
-        Command::AddHolding(holding) => inputs.holdings.push((**holding).clone()),
+        Command::AddHolding(holding) => holdings::add(inputs, holding),
         Command::RemoveHolding { row } => holdings::remove(inputs, *row)?,
         Command::ChangeHolding { row, change } => holdings::change(inputs, *row, change)?,
         Command::SetExposure { row, money } => {

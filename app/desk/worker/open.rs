@@ -1,0 +1,102 @@
+//! Files into a document: a workspace, a book, or parts that join the current book. Nothing of the session changes here.
+
+use super::request::Opened;
+use crate::opening::{self, Parts};
+use crate::workspace::{Document, Settings, is_workspace, read};
+use ebbmark_engine::factors::{Inputs, Model};
+use ebbmark_engine::tables::{Fault, Faults, Place};
+use std::path::{Path, PathBuf};
+use std::sync::Arc;
+
+/// Opens files, or the built-in example where there are none. A book is opened only if it makes a valid model.
+///
+/// # Errors
+/// Everything wrong with the files.
+pub fn open(paths: &[PathBuf], current: &Document) -> Result<Opened, Faults> {
+    match paths {
+        [] => Ok(opened_book(opening::built_in_example()?, &current.settings)),
+        [path] if is_workspace(path) => open_workspace(path),
+        _ => match paths.iter().find(|path| is_workspace(path)) {
+            Some(workspace) => Err(alone(workspace)),
+            None => open_parts(opening::read_files(paths)?, current),
+        },
+    }
+}
+
+fn open_workspace(path: &Path) -> Result<Opened, Faults> {
+    let workspace = read(path).map_err(|error| Faults(vec![error.into_fault()]))?;
+    Ok(Opened {
+        document: workspace.document,
+        view: Some(workspace.view),
+        file: Some(path.to_path_buf()),
+        notices: Vec::new(),
+    })
+}
+
+fn alone(workspace: &Path) -> Faults {
+    Faults(vec![Fault {
+        place: Place { file: workspace.display().to_string(), line: None, column: None },
+        found: "a workspace together with other files".to_owned(),
+        expected: "a workspace alone".to_owned(),
+    }])
+}
+
+fn open_parts(parts: Parts, current: &Document) -> Result<Opened, Faults> {
+    let opened = if parts.holdings.is_some() {
+        opened_book(parts.into_book()?, &current.settings)
+    } else {
+        joined(parts, current)
+    };
+    check(&opened.document)?;
+    Ok(opened)
+}
+
+/// Whether a document makes a valid model, in whichever of its currencies: where only the book's currency is left to be
+/// said, the window asks for it.
+fn check(document: &Document) -> Result<(), Faults> {
+    let Document { inputs, settings, .. } = document;
+    let mut settings = settings.model_settings();
+    let Err(faults) = Model::assemble(inputs, &settings) else { return Ok(()) };
+    let is_valid_in = |currency: &String| {
+        settings.book_currency = Some(currency.clone());
+        Model::assemble(inputs, &settings).is_ok()
+    };
+    let mut named = inputs.holdings.iter().filter_map(|holding| holding.currency.as_ref());
+    if document.settings.book_currency.is_none() && named.any(is_valid_in) { Ok(()) } else { Err(faults) }
+}
+
+/// A book with settings of its own; how it is read is taken over from what was open before.
+pub fn opened_book(book: opening::Opened, before: &Settings) -> Opened {
+    let settings = Settings {
+        book_currency: book.book_currency,
+        as_of: book.as_of,
+        capital: None,
+        loss_limit: None,
+        ..before.clone()
+    };
+    let document = Document {
+        name: book.name,
+        inputs: Arc::new(book.inputs),
+        holidays: book.holidays.map(Arc::new),
+        settings,
+    };
+    Opened { document, view: None, file: None, notices: book.notices }
+}
+
+/// The current book with the parts that were opened in place of its own.
+fn joined(parts: Parts, current: &Document) -> Opened {
+    let old = &current.inputs;
+    let inputs = Inputs {
+        holdings: old.holdings.clone(),
+        exposures: parts.exposures.unwrap_or_else(|| old.exposures.clone()),
+        factors: parts.factors.unwrap_or_else(|| old.factors.clone()),
+        correlation: parts.correlation.or_else(|| old.correlation.clone()),
+        files: old.files.clone(),
+    };
+    let document = Document {
+        inputs: Arc::new(inputs),
+        holidays: parts.holidays.map(Arc::new).or_else(|| current.holidays.clone()),
+        ..current.clone()
+    };
+    Opened { document, view: None, file: None, notices: parts.notices }
+}
