@@ -1,4 +1,4 @@
-//! Workspaces as files.
+//! Workspaces as files: told by their extension, read with their faults, written whole. Their text is made next door.
 
 use super::Workspace;
 use super::format::{FORMAT, FormatError, text_of_workspace, workspace_of_text};

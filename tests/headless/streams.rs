@@ -1,4 +1,4 @@
-//! What goes to which stream, and the exit codes.
+//! What goes to which stream, and the exit codes. What the answer says is looked at elsewhere.
 
 use super::support::{ONE_SHARE, call, command, write};
 use serde_json::Value;

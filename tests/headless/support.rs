@@ -1,4 +1,4 @@
-//! Running the program and reading what it says.
+//! Running the program and reading what it says. Asserts nothing of its own but that a call ended as it should.
 
 use serde_json::Value;
 use std::fs;

@@ -1,4 +1,4 @@
-//! The root of a continuous function in a bracket.
+//! The root of a continuous function in a bracket. Derivatives are not asked for.
 
 /// A root of `function` in `[low, high]` to within `tolerance`, by Brent's method; none where the ends have the same
 /// sign or a value is NaN.
