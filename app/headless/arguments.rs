@@ -237,7 +237,7 @@ fn parse_threads(text: &str) -> Result<usize, String> {
 }
 
 fn parse_date(text: &str) -> Result<Date, String> {
-    text.trim().parse::<Date>().map_err(|_| "expected a date written YYYY-MM-DD".into())
+    text.trim().parse::<Date>().ok().ok_or_else(|| "expected a date written YYYY-MM-DD".into())
 }
 
 fn parse_currency(text: &str) -> Result<String, String> {

@@ -8,7 +8,8 @@ pub fn root(function: impl Fn(f64) -> f64, low: f64, high: f64, tolerance: f64) 
     const MOST_STEPS: usize = 200;
     let (mut a, mut b) = (low, high);
     let (mut fa, mut fb) = (function(a), function(b));
-    if !(fa * fb <= 0.0) {
+    let is_bracketed = fa * fb <= 0.0;
+    if !is_bracketed {
         return None;
     }
     let (mut c, mut fc, mut step, mut step_before) = (a, fa, b - a, b - a);
