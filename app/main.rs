@@ -2,6 +2,7 @@
 //! Says what failed and with which exit code; does nothing itself.
 
 use clap::Parser;
+use ebbmark::desk;
 use ebbmark::headless::{Arguments, Command, Failure, read, streams};
 use std::any::Any;
 use std::panic::{self, AssertUnwindSafe, PanicHookInfo};
@@ -25,9 +26,15 @@ fn main() -> ExitCode {
     }
 }
 
-/// Prints the reading as text until the window is here.
+/// Opens the window. Where none can be had, says why and prints the reading as text.
 fn open(files: &[PathBuf]) -> Result<(), Failure> {
-    read::read_files(files)
+    match desk::open(files) {
+        Ok(()) => Ok(()),
+        Err(reason) => {
+            streams::tell(&format!("ebbmark: {reason}; its answer for the same book follows."));
+            read::read_files(files)
+        }
+    }
 }
 
 fn obey(command: &Command) -> Result<(), Failure> {
