@@ -18,6 +18,8 @@ pub struct Note {
 #[derive(Debug, Clone, PartialEq, Eq, Default)]
 pub struct Notices {
     notes: Vec<Note>,
+    /// What holds of the model at hand, shown or put away.
+    standing: Vec<Notice>,
     next: u64,
 }
 
@@ -49,11 +51,17 @@ impl Notices {
         self.add(Notice { level: NoticeLevel::Warning, text: text.into() }, true);
     }
 
-    /// Passes on a notice of the engine; one that already stands is not repeated.
-    pub fn pass_on(&mut self, notice: Notice) {
-        if self.notes.iter().all(|note| note.notice != notice) {
-            self.add(notice, false);
-        }
+    /// Tells what holds of the model at hand. What held before and no longer does goes; what still holds is not told
+    /// again, so that it stays away once it was put away.
+    pub fn stand(&mut self, standing: Vec<Notice>) {
+        let gone: Vec<Notice> =
+            self.standing.iter().filter(|notice| !standing.contains(notice)).cloned().collect();
+        self.notes.retain(|note| !gone.contains(&note.notice));
+        let old = std::mem::replace(&mut self.standing, standing.clone());
+        standing
+            .into_iter()
+            .filter(|notice| !old.contains(notice))
+            .for_each(|notice| self.add(notice, false));
     }
 
     /// Puts one away.

@@ -112,7 +112,7 @@ fn just_opened(opened: Opened) -> Session {
     let Opened { document, view, file, notices } = opened;
     let workspace = Workspace { document, view: view.unwrap_or_default() };
     let mut session = Session::new(Kept { workspace, file, has_unsaved_edits: false });
-    notices.into_iter().for_each(|notice| session.notices_mut().pass_on(notice));
+    notices.into_iter().for_each(|notice| session.notices_mut().tell(notice.level, notice.text));
     session
 }
 

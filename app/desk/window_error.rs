@@ -63,8 +63,10 @@ fn names_library(words: &str) -> bool {
     words.contains(".so") || words.to_lowercase().contains("library")
 }
 
+/// Words in one line, not too long, without the place in a library's source that they may begin with.
 fn one_line(words: &str) -> String {
     const LONGEST: usize = 160;
-    let line: Vec<&str> = words.split_whitespace().collect();
+    let after_place = words.rsplit_once(".rs:").and_then(|(_, rest)| rest.split_once(": "));
+    let line: Vec<&str> = after_place.map_or(words, |(_, rest)| rest).split_whitespace().collect();
     line.join(" ").chars().take(LONGEST).collect()
 }

@@ -5,6 +5,8 @@
 mod support;
 /// Edits of holdings, factors, correlations and settings.
 mod edits;
+/// Messages.
+mod notices;
 /// Steps back and forth.
 mod undo;
 /// Workspaces and kept sessions.

@@ -48,7 +48,7 @@ impl Session {
         let open = Command::Open(file.iter().cloned().collect());
         self.undo.remember(open.text(), Target::of(&open), self.state());
         self.undo.end_gesture();
-        notices.into_iter().for_each(|notice| self.notices.pass_on(notice));
+        notices.into_iter().for_each(|Notice { level, text }| self.notices.tell(level, text));
         let theme = self.view.theme;
         self.view = view.unwrap_or_else(|| View { theme, ..View::default() });
         let document = Arc::new(document);
@@ -84,10 +84,11 @@ impl Session {
         has_all_days: bool,
     ) -> Vec<Request> {
         self.faults.clear();
-        model.notices.iter().for_each(|notice| self.notices.pass_on(notice.clone()));
+        let mut standing = model.notices.clone();
         if !has_all_days {
-            self.notices.pass_on(fewer_days_notice(&self.document.settings, days.len()));
+            standing.push(fewer_days_notice(&self.document.settings, days.len()));
         }
+        self.notices.stand(standing);
         self.live = Live {
             generation,
             model: Some(model),
