@@ -124,6 +124,9 @@ pub struct Holding {
     pub description: Description,
     /// Line in the file it came from; none when it was added in the window.
     pub line: Option<usize>,
+    /// Names and cells of columns that are not known: kept, not used.
+    #[serde(default)]
+    pub other_columns: Vec<(String, String)>,
 }
 
 /// The move of a factor that a sensitivity counts.

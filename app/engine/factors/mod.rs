@@ -3,6 +3,10 @@
 
 /// Everything typed or read that makes a model.
 pub mod inputs;
+/// From a table of factors to what it says about each.
+pub mod read_factors;
+/// From a square table to a symmetric matrix.
+pub mod read_correlation;
 /// A risk factor and its diffusion.
 pub mod diffusion;
 /// A valid correlation matrix.
@@ -21,4 +25,6 @@ pub use correlation::{Correlation, CorrelationError};
 pub use diffusion::{Diffusion, RiskFactor};
 pub use inputs::{CorrelationTable, FactorRow, FileLabels, Inputs};
 pub use model::{Model, ModelHolding, ModelSettings};
+pub use read_correlation::read_correlation;
+pub use read_factors::read_factors;
 pub use valuation::{CurrencyPart, CurrencyRate, Term, Valuation};
