@@ -3,7 +3,7 @@
 
 use super::arguments::{LossFromName, SettingArguments, SourceArguments};
 use super::failure::Failure;
-use crate::opening::{self, Opened, Role};
+use crate::opening::{self, FileKind, Opened};
 use crate::workspace::{self, Document, Settings};
 use ebbmark_engine::measures::LossFrom;
 use ebbmark_engine::tables::{Faults, Notice};
@@ -50,13 +50,13 @@ fn from_opened(opened: Opened) -> Source {
     (Document { name, inputs: Arc::new(inputs), holidays, settings }, notices)
 }
 
-fn named_files(arguments: &SourceArguments) -> Vec<(Role, PathBuf)> {
+fn named_files(arguments: &SourceArguments) -> Vec<(FileKind, PathBuf)> {
     let named = [
-        (Role::Positions, &arguments.positions),
-        (Role::Exposures, &arguments.exposures),
-        (Role::Factors, &arguments.factors),
-        (Role::Correlation, &arguments.correlation),
-        (Role::Holidays, &arguments.holidays),
+        (FileKind::Positions, &arguments.positions),
+        (FileKind::Exposures, &arguments.exposures),
+        (FileKind::Factors, &arguments.factors),
+        (FileKind::Correlation, &arguments.correlation),
+        (FileKind::Holidays, &arguments.holidays),
     ];
     named.into_iter().filter_map(|(role, path)| Some((role, path.clone()?))).collect()
 }

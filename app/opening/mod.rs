@@ -1,106 +1,60 @@
-//! Files become a book: bytes to text, text to tables, tables to inputs. Knows paths and roles;
-//! knows no screen, no command line and no workspace.
+//! Files become a book: bytes to tables, tables to parts, parts to inputs. Knows paths and what a file is; knows no
+//! screen, no command line and no workspace.
 
-use ebbmark_engine::book::{Exposure, Holding};
-use ebbmark_engine::factors::{CorrelationTable, FactorRow, Inputs};
-use ebbmark_engine::tables::{Faults, Notice};
-use jiff::civil::Date;
-use std::path::PathBuf;
+mod example;
+mod parts;
 
-/// What a file is read as.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum Role {
-    /// `positions.csv`.
-    Positions,
-    /// `exposures.csv`.
-    Exposures,
-    /// `factors.csv`.
-    Factors,
-    /// `correlation.csv`.
-    Correlation,
-    /// `holidays.csv`.
-    Holidays,
-}
+pub use ebbmark_engine::tables::FileKind;
+pub use example::built_in_example;
+pub use parts::{Opened, Parts};
 
-/// What some files hold; a part without a file is none.
-#[derive(Debug, Clone, PartialEq, Default)]
-pub struct Parts {
-    /// Stem of the positions file.
-    pub name: Option<String>,
-    /// Rows of the positions file.
-    pub holdings: Option<Vec<Holding>>,
-    /// Rows of the exposures file.
-    pub exposures: Option<Vec<Exposure>>,
-    /// Rows of the factors file.
-    pub factors: Option<Vec<FactorRow>>,
-    /// The correlation file.
-    pub correlation: Option<CorrelationTable>,
-    /// Days without trading, ascending.
-    pub holidays: Option<Vec<Date>>,
-    /// What the readers want told.
-    pub notices: Vec<Notice>,
-}
+use ebbmark_engine::tables::{Fault, Faults, Place, Table};
+use std::fs;
+use std::path::{Path, PathBuf};
 
-/// A book as it was opened, before it is checked as a whole.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Opened {
-    /// Stem of the positions file.
-    pub name: String,
-    /// Everything that makes a model.
-    pub inputs: Inputs,
-    /// Days without trading, ascending; none where trading days are weekdays.
-    pub holidays: Option<Vec<Date>>,
-    /// The book's currency, where it is known beside the files: the built-in example's.
-    pub book_currency: Option<String>,
-    /// Date of the prices, where it is known beside the files: the built-in example's.
-    pub as_of: Option<Date>,
-    /// What the readers want told.
-    pub notices: Vec<Notice>,
-}
-
-/// Reads files whose roles are told by their headers; two of one role are a fault.
+/// Reads files whose kinds are told by their headers; two of one kind are a fault.
 ///
 /// # Errors
 /// Every fault of every file.
-pub fn read_files(_paths: &[PathBuf]) -> Result<Parts, Faults> {
-    Ok(Parts::default())
+pub fn read_files(paths: &[PathBuf]) -> Result<Parts, Faults> {
+    gather(paths.iter().map(|path| {
+        let table = read_table(path)?;
+        let kind = FileKind::of(&table).map_err(|fault| Faults(vec![fault]))?;
+        Ok((kind, stem(path), table))
+    }))
 }
 
-/// Reads files whose roles the caller names.
+/// Reads files whose kinds the caller names.
 ///
 /// # Errors
 /// Every fault of every file.
-pub fn read_named(_files: &[(Role, PathBuf)]) -> Result<Parts, Faults> {
-    Ok(Parts::default())
+pub fn read_named(files: &[(FileKind, PathBuf)]) -> Result<Parts, Faults> {
+    gather(files.iter().map(|(kind, path)| Ok((*kind, stem(path), read_table(path)?))))
 }
 
-impl Parts {
-    /// The book of these parts.
-    ///
-    /// # Errors
-    /// A fault where there are no positions.
-    pub fn into_book(self) -> Result<Opened, Faults> {
-        Ok(Opened {
-            name: self.name.unwrap_or_default(),
-            inputs: Inputs {
-                holdings: self.holdings.unwrap_or_default(),
-                exposures: self.exposures.unwrap_or_default(),
-                factors: self.factors.unwrap_or_default(),
-                correlation: self.correlation,
-                files: Default::default(),
-            },
-            holidays: self.holidays,
-            book_currency: None,
-            as_of: None,
-            notices: self.notices,
-        })
+fn gather(tables: impl Iterator<Item = Result<(FileKind, String, Table), Faults>>) -> Result<Parts, Faults> {
+    let (mut parts, mut faults) = (Parts::default(), Vec::new());
+    for table in tables {
+        let taken = table.and_then(|(kind, stem, table)| parts.take(kind, &stem, &table));
+        faults.extend(taken.err().into_iter().flat_map(|more| more.0));
     }
+    if faults.is_empty() { Ok(parts) } else { Err(Faults(faults)) }
 }
 
-/// The book that is compiled in.
-///
-/// # Errors
-/// None in a released program; a test reads it.
-pub fn built_in_example() -> Result<Opened, Faults> {
-    Parts::default().into_book()
+fn read_table(path: &Path) -> Result<Table, Faults> {
+    let label = path.display().to_string();
+    let bytes = fs::read(path).map_err(|error| {
+        let place = Place { file: label.clone(), line: None, column: None };
+        Faults(vec![Fault {
+            place,
+            found: error.to_string(),
+            expected: "a file that can be read".to_owned(),
+        }])
+    })?;
+    Table::from_bytes(&bytes, &label)
+}
+
+/// What a book is called.
+fn stem(path: &Path) -> String {
+    path.file_stem().map(|stem| stem.to_string_lossy().into_owned()).unwrap_or_default()
 }

@@ -32,6 +32,7 @@ pub(crate) fn holding(name: &str, kind: Kind, quantity: f64, price: f64) -> Hold
         carry: 0.0,
         description: Description::default(),
         line: None,
+        other_columns: Vec::new(),
     }
 }
 

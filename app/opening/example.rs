@@ -1,0 +1,35 @@
+//! The built-in example book, compiled in from `example-portfolios/mixed-fund`.
+
+use super::{FileKind, Opened, Parts};
+use ebbmark_engine::tables::{Faults, Table};
+use jiff::civil::{Date, date};
+
+/// Stem of the example's positions file.
+const NAME: &str = "Ellerwick";
+const CURRENCY: &str = "EUR";
+const AS_OF: Date = date(2026, 11, 30);
+
+const FILES: [(FileKind, &str, &str); 5] = [
+    (FileKind::Positions, "Ellerwick.csv", include_str!("../../example-portfolios/mixed-fund/Ellerwick.csv")),
+    (FileKind::Exposures, "exposures.csv", include_str!("../../example-portfolios/mixed-fund/exposures.csv")),
+    (FileKind::Factors, "factors.csv", include_str!("../../example-portfolios/mixed-fund/factors.csv")),
+    (
+        FileKind::Correlation,
+        "correlation.csv",
+        include_str!("../../example-portfolios/mixed-fund/correlation.csv"),
+    ),
+    (FileKind::Holidays, "holidays.csv", include_str!("../../example-portfolios/mixed-fund/holidays.csv")),
+];
+
+/// The book that is compiled in, with its currency and the date of its prices.
+///
+/// # Errors
+/// None in a released program; a test reads it.
+pub fn built_in_example() -> Result<Opened, Faults> {
+    let mut parts = Parts::default();
+    for (kind, label, text) in FILES {
+        parts.take(kind, NAME, &Table::read(text, label)?)?;
+    }
+    let opened = parts.into_book()?;
+    Ok(Opened { book_currency: Some(CURRENCY.to_owned()), as_of: Some(AS_OF), ..opened })
+}
