@@ -4,10 +4,16 @@
 pub mod app;
 /// Everything that can be done in the window.
 pub mod commands;
+/// Widgets that edit in place.
+pub mod inputs;
 /// Short messages that stay until put away.
 pub mod notices;
 /// Everything that is drawn.
 pub mod panels;
+/// Charts on screen.
+pub mod plot;
+/// What the panels say about the reading.
+pub mod readout;
 /// What the window shows, and how commands change it.
 pub mod session;
 /// Fonts and colours.
