@@ -40,6 +40,15 @@ pub(crate) fn reverting_level(level: f64, long_run: f64, speed: f64, volatility:
     factor(level, Diffusion::RevertingLevel { volatility, long_run, half_life: half_life(speed) })
 }
 
+/// Keeps a factor's speed a year when a year has another number of days.
+pub(crate) fn rescale_half_life(factor: &mut RiskFactor, days_per_year: f64) {
+    if let Diffusion::RevertingLog { half_life: HalfLife::Days(days), .. }
+    | Diffusion::RevertingLevel { half_life: HalfLife::Days(days), .. } = &mut factor.diffusion
+    {
+        *days *= days_per_year / DAYS_PER_YEAR;
+    }
+}
+
 fn half_life(speed: f64) -> HalfLife {
     if speed > 0.0 { HalfLife::Days(std::f64::consts::LN_2 / speed * DAYS_PER_YEAR) } else { HalfLife::None }
 }

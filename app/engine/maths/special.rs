@@ -2,7 +2,7 @@
 
 use std::f64::consts::PI;
 
-/// Distribution function of the standard normal law, to about 1e-14 of itself even far into the lower tail.
+/// Distribution function of the standard normal law, to about 1e-14 of itself, 2e-13 at `z = -37`.
 ///
 /// In the middle by the series `1/2 + phi(z) (z + z^3/3 + z^5/(3 5) + ...)` (Marsaglia, Evaluating the normal
 /// distribution, J. Statistical Software 11, 2004), beyond by Laplace's continued fraction

@@ -1,0 +1,5 @@
+//! Properties that hold for any input.
+
+mod confidence;
+mod readings;
+mod shapes;
