@@ -60,7 +60,7 @@ impl WindowError {
 }
 
 fn names_library(words: &str) -> bool {
-    words.contains(".so") || words.to_lowercase().contains("library")
+    words.contains(".so") || words.to_lowercase().contains("librar")
 }
 
 /// Words in one line, not too long, without the place in a library's source that they may begin with.
