@@ -85,14 +85,16 @@ pub fn opened_book(book: opening::Opened, before: &Settings) -> Opened {
 
 /// The current book with the parts that were opened in place of its own.
 fn joined(parts: Parts, current: &Document) -> Opened {
-    let old = &current.inputs;
-    let inputs = Inputs {
-        holdings: old.holdings.clone(),
-        exposures: parts.exposures.unwrap_or_else(|| old.exposures.clone()),
-        factors: parts.factors.unwrap_or_else(|| old.factors.clone()),
-        correlation: parts.correlation.or_else(|| old.correlation.clone()),
-        files: old.files.clone(),
-    };
+    let mut inputs = Inputs::clone(&current.inputs);
+    if let Some(exposures) = parts.exposures {
+        (inputs.exposures, inputs.files.exposures) = (exposures, parts.files.exposures);
+    }
+    if let Some(factors) = parts.factors {
+        (inputs.factors, inputs.files.factors) = (factors, parts.files.factors);
+    }
+    if parts.correlation.is_some() {
+        (inputs.correlation, inputs.files.correlation) = (parts.correlation, parts.files.correlation);
+    }
     let document = Document {
         inputs: Arc::new(inputs),
         holidays: parts.holidays.map(Arc::new).or_else(|| current.holidays.clone()),
