@@ -5,7 +5,7 @@ use super::notices::Refusal;
 use super::session::Session;
 use super::window_error::WindowError;
 use super::worker::open::{open as open_files, opened_book};
-use super::worker::{Opened, Worker};
+use super::worker::{Dialogs, Opened, Worker};
 use crate::opening;
 use crate::workspace::{self, Beginning, Document, Kept, Settings, Slot, View, Workspace};
 use ebbmark_engine::tables::{Faults, NoticeLevel};
@@ -29,7 +29,7 @@ pub fn open(files: &[PathBuf]) -> Result<(), WindowError> {
         opened.store(true, Ordering::Release);
         let (session, slot) = begin(files);
         let ctx = creation.egui_ctx.clone();
-        let worker = Worker::start(slot, move || ctx.request_repaint());
+        let worker = Worker::start(slot, Dialogs::OfTheDesktop, move || ctx.request_repaint());
         Ok(Box::new(App::new(&creation.egui_ctx, session, worker)))
     });
     // A missing system library ends in a panic inside the window's libraries; one that comes later is a fault of ours.

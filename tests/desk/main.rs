@@ -11,5 +11,7 @@ mod notices;
 mod undo;
 /// Workspaces and kept sessions.
 mod kept;
+/// The window by its labels.
+mod window;
 /// Runs, readings, files.
 mod worker;

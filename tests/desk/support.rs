@@ -2,7 +2,7 @@
 
 use ebbmark::desk::commands::Command;
 use ebbmark::desk::session::Session;
-use ebbmark::desk::worker::{Request, Worker};
+use ebbmark::desk::worker::{Dialogs, Request, Worker};
 use ebbmark::workspace::{Document, Kept, Settings, View, Workspace};
 use ebbmark_engine::book::{Description, DiffusionKind, HalfLife, Holding, Kind, LevelUnit, TypedFigure};
 use ebbmark_engine::factors::{CorrelationTable, Inputs};
@@ -82,7 +82,7 @@ pub(crate) struct Driven {
 
 impl Driven {
     pub(crate) fn start(mut session: Session) -> Self {
-        let worker = Worker::start(None, || ());
+        let worker = Worker::start(None, Dialogs::None, || ());
         worker.ask(session.run());
         Self { session, worker }
     }

@@ -32,7 +32,7 @@ fn edit_and_crash(program: &Path, folder: &Path, state: &Path) -> Outcome<()> {
     open_book(&window, &book)?;
     twin.click("Slipway");
     window.click(twin.place("Slipway"))?;
-    window.click(twin.place("Volatility"))?;
+    window.click(twin.place("Volatility of Slipway"))?;
     window.key("ctrl+a")?;
     window.type_text(TYPED)?;
     window.key("Return")?;

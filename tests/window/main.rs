@@ -26,7 +26,7 @@ pub(crate) type Outcome<T> = Result<T, Box<dyn Error>>;
 pub(crate) const POSITIONS: &str = "\
 name,kind,quantity,price,multiplier,unit,diffusion,volatility,long_run,half_life_days
 Slipway,spot,1200,84.5,,,,0.24,,
-Harbour rate,level,-900,2.75,100,percent,reverting-level,0.85,3.1,90
+Harbour rate,level,-900,2.75,10,percent,reverting-level,0.85,3.1,90
 Till,cash,25000,,,,,,,
 ";
 

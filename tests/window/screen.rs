@@ -27,7 +27,7 @@ impl Window {
         let program = Command::new(program).env("EBBMARK_STATE", state).spawn()?;
         let mut window = Self { program, id: String::new() };
         window.id = wait_for("the window", || {
-            let found = xdotool(&["search", "--onlyvisible", "--name", "- Ebbmark$"]).ok()?;
+            let found = xdotool(&["search", "--onlyvisible", "--name", " Ebbmark$"]).ok()?;
             found.lines().next().map(str::to_owned)
         })?;
         std::thread::sleep(PAUSE);

@@ -6,7 +6,7 @@ use ebbmark::desk::App;
 use ebbmark::desk::commands::Command;
 use ebbmark::desk::session::{RunState, Session};
 use ebbmark::desk::start::session_of;
-use ebbmark::desk::worker::Worker;
+use ebbmark::desk::worker::{Dialogs, Worker};
 use egui::Pos2;
 use egui_kittest::Harness;
 use egui_kittest::kittest::Queryable;
@@ -26,7 +26,7 @@ impl Twin {
     pub(crate) fn open() -> Self {
         let harness = Harness::builder().with_size(SIZE).with_max_steps(64).build_eframe(|creation| {
             let ctx = creation.egui_ctx.clone();
-            let worker = Worker::start(None, move || ctx.request_repaint());
+            let worker = Worker::start(None, Dialogs::None, move || ctx.request_repaint());
             App::new(&creation.egui_ctx, session_of(&[], None), worker)
         });
         Self { harness: RefCell::new(harness) }

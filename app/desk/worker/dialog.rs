@@ -1,5 +1,6 @@
 //! The thread that shows file dialogs. It may wait as long as a dialog is open; nothing else waits for it.
 
+use super::Dialogs;
 use super::post::Post;
 use super::request::Answer;
 use crate::desk::commands::PathPurpose;
@@ -18,10 +19,13 @@ pub(super) struct Asked {
 }
 
 /// Shows dialogs until the program closes. Of those asked for while one was open, none is shown.
-pub(super) fn serve(asked: &Receiver<Asked>, post: &Post) {
+pub(super) fn serve(asked: &Receiver<Asked>, shown: Dialogs, post: &Post) {
     while let Ok(Asked { purpose, file_name }) = asked.recv() {
         let began = Instant::now();
-        let paths = pick(purpose, &file_name);
+        let paths = match shown {
+            Dialogs::OfTheDesktop => pick(purpose, &file_name),
+            Dialogs::None => Vec::new(),
+        };
         if !paths.is_empty() {
             post.answer(Answer::Picked { purpose, paths });
         } else if began.elapsed() < SOONEST_CANCEL {

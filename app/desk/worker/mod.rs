@@ -43,6 +43,15 @@ pub struct Worker {
     answers: Receiver<Answer>,
 }
 
+/// Where file dialogs come from.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Dialogs {
+    /// From the desktop, where it has any.
+    OfTheDesktop,
+    /// There are none: paths are typed. For tests, in which nobody answers a dialog.
+    None,
+}
+
 struct Keeper {
     asked: Sender<Box<Kept>>,
     thread: JoinHandle<()>,
@@ -51,7 +60,7 @@ struct Keeper {
 impl Worker {
     /// Starts the threads. `wake` is called from them whenever an answer is there to be taken; sessions are kept in
     /// `slot`, where there is one.
-    pub fn start(slot: Option<Slot>, wake: impl Fn() + Send + Sync + 'static) -> Self {
+    pub fn start(slot: Option<Slot>, shown: Dialogs, wake: impl Fn() + Send + Sync + 'static) -> Self {
         let (sender, answers) = channel();
         let post = Post::new(sender, wake);
         let board = Arc::new(Board::default());
@@ -62,7 +71,7 @@ impl Worker {
         let (files, asked) = channel();
         begin(&post, move |post| files::serve(&asked, post));
         let (dialogs, asked) = channel();
-        begin(&post, move |post| dialog::serve(&asked, post));
+        begin(&post, move |post| dialog::serve(&asked, shown, post));
         let keeper = slot.map(|slot| {
             let (sender, asked) = channel();
             let thread = begin(&post, move |post| keep::serve(&slot, &asked, post));

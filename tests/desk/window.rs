@@ -1,0 +1,198 @@
+//! The window driven by its accessible labels, without a screen: what a hand does from opening to export.
+
+use crate::support::{Folder, session};
+use ebbmark::desk::App;
+use ebbmark::desk::session::{RunState, Session};
+use ebbmark::desk::start::session_of;
+use ebbmark::desk::worker::{Dialogs, Worker};
+use ebbmark::workspace::{Tab, Theme};
+use egui::{Key, Modifiers, Vec2, vec2};
+use egui_kittest::Harness;
+use egui_kittest::kittest::Queryable;
+use std::path::Path;
+use std::time::{Duration, Instant};
+
+const SIZE: [f32; 2] = [1400.0, 900.0];
+/// No test waits longer, even on a loaded machine.
+const LONGEST_WAIT: Duration = Duration::from_secs(60);
+
+struct Hand(Harness<'static, App>);
+
+impl Hand {
+    fn on(session: Session) -> Self {
+        Self::at_size(session, SIZE)
+    }
+
+    fn at_size(session: Session, size: [f32; 2]) -> Self {
+        let mut hand = Self(Harness::builder().with_size(size).build_eframe(|creation| {
+            let ctx = creation.egui_ctx.clone();
+            let worker = Worker::start(None, Dialogs::None, move || ctx.request_repaint());
+            App::new(&creation.egui_ctx, session, worker)
+        }));
+        hand.until("the first run", |session| session.live().state == RunState::Finished);
+        hand
+    }
+
+    fn session(&self) -> &Session {
+        self.0.state().session()
+    }
+
+    fn until(&mut self, what: &str, is_wished: impl Fn(&Session) -> bool) {
+        let began = Instant::now();
+        while !is_wished(self.session()) {
+            assert!(began.elapsed() < LONGEST_WAIT, "waited in vain for {what}");
+            self.0.run_steps(1);
+        }
+        self.0.run_steps(3);
+    }
+
+    fn click(&mut self, label: &str) {
+        self.0.get_by_label(label).click();
+        self.0.run_steps(4);
+    }
+
+    fn press(&mut self, modifiers: Modifiers, key: Key) {
+        self.0.key_press_modifiers(modifiers, key);
+        self.0.run_steps(4);
+    }
+
+    /// Types over what stands in the field that is being edited, and enters it.
+    fn enter(&mut self, text: &str) {
+        self.0.key_press_modifiers(Modifiers::COMMAND, Key::A);
+        self.0.event(egui::Event::Text(text.to_owned()));
+        self.0.run_steps(2);
+        self.press(Modifiers::NONE, Key::Enter);
+    }
+
+    fn open_by_path(&mut self, paths: &[&Path]) {
+        let paths: Vec<String> = paths.iter().map(|path| path.display().to_string()).collect();
+        self.press(Modifiers::COMMAND | Modifiers::SHIFT, Key::O);
+        self.enter(&paths.join(";"));
+    }
+
+    /// Drags what has a label, in several moves.
+    fn drag(&mut self, label: &str, by: Vec2) {
+        let from = self.0.get_by_label(label).rect().center();
+        self.0.drag_at(from);
+        self.0.run_steps(1);
+        for part in 1..=5 {
+            self.0.hover_at(from + by * (part as f32 / 5.0));
+            self.0.run_steps(1);
+        }
+        self.0.drop_at(from + by);
+        self.0.run_steps(4);
+    }
+
+    fn volatility(&self) -> f64 {
+        let described = &self.session().document().inputs.holdings[0].description;
+        described.volatility.unwrap().value
+    }
+}
+
+#[test]
+fn click_the_window_opens_with_the_example_and_its_reading() {
+    let hand = Hand::on(session_of(&[], None));
+    assert!(!hand.session().document().inputs.holdings.is_empty());
+    assert!(hand.session().faults().is_empty() && hand.session().refusal().is_none());
+    assert!(hand.session().live().at_line.is_some() && hand.session().live().bands.is_some());
+}
+
+#[test]
+fn click_a_volatility_is_typed_in_place_and_taken_back() {
+    let mut hand = Hand::on(session());
+    hand.click("Harbour");
+    hand.click("Volatility of Harbour");
+    hand.enter("31");
+    assert_eq!(hand.volatility(), 0.31);
+    hand.until("its run", |session| session.live().state == RunState::Finished);
+    hand.click("Undo");
+    assert_eq!(hand.volatility(), 0.2);
+    hand.click("Redo");
+    assert_eq!(hand.volatility(), 0.31);
+    hand.press(Modifiers::COMMAND, Key::Z);
+    assert_eq!(hand.volatility(), 0.2);
+}
+
+#[test]
+fn click_a_dragged_value_is_one_step() {
+    let mut hand = Hand::on(session());
+    hand.click("Harbour");
+    hand.drag("Volatility of Harbour", vec2(60.0, 0.0));
+    assert!(hand.volatility() > 0.2, "{}", hand.volatility());
+    hand.click("Undo");
+    assert_eq!(hand.volatility(), 0.2);
+    assert_eq!(hand.session().undo_text(), None);
+}
+
+#[test]
+fn click_the_line_is_dragged_in_one_step_without_a_run() {
+    let mut hand = Hand::on(session());
+    let generation = hand.session().live().generation;
+    hand.drag("Reading line", vec2(120.0, 0.0));
+    let day = hand.session().reading_day();
+    assert!(day > 21, "{day}");
+    hand.until("the reading", |session| session.live().at_line.as_ref().is_some_and(|line| line.day == day));
+    assert_eq!(hand.session().live().generation, generation);
+    hand.click("Undo");
+    assert_eq!(hand.session().reading_day(), 21);
+    assert_eq!(hand.session().undo_text(), None);
+}
+
+#[test]
+fn click_a_book_is_opened_by_its_path() {
+    let folder = Folder::new();
+    let book = folder.write("mole.csv", "name,quantity,price,volatility\nMole,50,40,25%\nQuay,5,10,0.3\n");
+    let correlation = folder.write("c.csv", "factor,Mole,Quay\nMole,1,0.5\nQuay,0.5,1\n");
+    let mut hand = Hand::on(session());
+    hand.open_by_path(&[&correlation, &book]);
+    hand.until("the book", |session| session.document().name == "mole");
+    assert!(hand.session().document().inputs.correlation.is_some());
+    assert_eq!(hand.session().path_field(), None);
+}
+
+#[test]
+fn click_a_bad_file_is_refused_with_a_way_back() {
+    let folder = Folder::new();
+    let book = folder.write("bad.csv", "name,quantity,price,volatility\nMole,x,40,25%\nQuay,5,-1,0.3\n");
+    let mut hand = Hand::on(session());
+    hand.open_by_path(&[&book]);
+    hand.until("the refusal", |session| session.refusal().is_some());
+    hand.0.get_by_label("Not opened: 2 things to mend");
+    hand.click("Keep small");
+    assert!(hand.session().refusal().is_none());
+    assert_eq!(hand.session().document().name, "small");
+}
+
+#[test]
+fn click_what_is_saved_is_opened_again_as_it_was() {
+    let folder = Folder::new();
+    let mut hand = Hand::on(session());
+    hand.click("Harbour");
+    hand.click("Volatility of Harbour");
+    hand.enter("44");
+    hand.click("Save");
+    hand.until("the path field", |session| session.path_field().is_some());
+    hand.enter(&folder.file("book.ron").display().to_string());
+    hand.until("the file", |session| !session.has_unsaved_edits());
+    hand.click("Dark");
+    hand.click("Correlation");
+    hand.click("Save");
+    hand.until("the file again", |session| session.notices().all().len() >= 2);
+
+    let mut again = Hand::on(session());
+    again.open_by_path(&[&folder.file("book.ron")]);
+    again.until("the workspace", |session| session.file().is_some());
+    assert_eq!(again.volatility(), 0.44);
+    assert_eq!((again.session().view().theme, again.session().view().tab), (Theme::Dark, Tab::Correlation));
+}
+
+#[test]
+fn click_the_smallest_window_shows_the_same() {
+    let mut hand = Hand::at_size(session(), [1100.0, 700.0]);
+    hand.click("Harbour");
+    hand.click("Volatility of Harbour");
+    hand.enter("31");
+    assert_eq!(hand.volatility(), 0.31);
+    hand.drag("Reading line", vec2(60.0, 0.0));
+    assert!(hand.session().reading_day() > 21);
+}
