@@ -50,14 +50,12 @@ pub fn density(sample: &[f64]) -> Density {
         share_between_points(&mut shares, (scale.at(*value) - from) / step);
     }
     let width = (0.9 * (sample.len() as f64).powf(-0.2) / step).max(1.0);
-    let smooth = smoothed(&shares, width);
+    let places = (0..POINTS).map(|k| from + k as f64 * step);
     // The ends are the sample's own, whatever the rounding of the scale.
-    let at = (0..POINTS).map(|k| scale.back(from + k as f64 * step).clamp(low, high));
-    let mut at: Vec<f64> = at.collect();
+    let mut at: Vec<f64> = places.clone().map(|u| scale.back(u).clamp(low, high)).collect();
     (at[0], at[POINTS - 1]) = (low, high);
-    let density =
-        smooth.iter().enumerate().map(|(k, share)| share * scale.slope(from + k as f64 * step)).collect();
-    with_area_one(at, density)
+    let heights = smoothed(&shares, width).into_iter().zip(places).map(|(share, u)| share * scale.slope(u));
+    with_area_one(at, heights.collect())
 }
 
 /// `u = asinh((x - centre) / spread)`.

@@ -68,7 +68,7 @@ pub fn first_bands(model: &Model, days: &[u32]) -> Bands {
 pub fn first_densities(model: &Model, day: u32) -> (Density, Density) {
     let exact = exact_moments(model, day);
     if exact.sd == 0.0 {
-        return (Density::of_one_value(exact.mean), Density::of_one_value((-exact.change).max(0.0)));
+        return (Density::of_one_value(exact.mean), Density::of_one_value(still_fall(exact.change)));
     }
     let law = law_of(&exact);
     let score = |k: usize| DENSITY_REACH * (2.0 * k as f64 / (DENSITY_POINTS - 1) as f64 - 1.0);
@@ -163,6 +163,11 @@ fn limit_reading(exact: &ExactMoments, law: &ShiftedLognormal, today: f64, limit
     }
 }
 
+/// Largest fall of a book that moves without chance; never a negative zero.
+fn still_fall(change: f64) -> f64 {
+    (0.0 - change).max(0.0)
+}
+
 /// Law of the largest fall of a Brownian motion with the book's change and sd.
 struct FallLaw {
     change: f64,
@@ -179,14 +184,14 @@ impl FallLaw {
     }
 
     fn quantile(&self, p: f64) -> f64 {
-        if self.sd > 0.0 { self.sd * drawdown_quantile(self.drift(), p) } else { (-self.change).max(0.0) }
+        if self.sd > 0.0 { self.sd * drawdown_quantile(self.drift(), p) } else { still_fall(self.change) }
     }
 
     fn mean_beyond(&self, from: f64) -> f64 {
         if self.sd > 0.0 {
             self.sd * drawdown_mean_beyond(self.drift(), from / self.sd)
         } else {
-            (-self.change).max(0.0)
+            still_fall(self.change)
         }
     }
 

@@ -1,6 +1,7 @@
 //! The book's mean, standard deviation and skewness in closed form. No paths here.
 
 mod products;
+mod exponents;
 mod system;
 
 use crate::factors::Model;

@@ -1,10 +1,10 @@
 //! The matrices behind the exact moments: covariances `E` of the exponentials and blocks `K` that read them.
 //! What a product is, is decided next door.
 
+use super::exponents::FactorMoves;
 use super::products::{Moves, Product, income, products};
 use crate::factors::Model;
 use crate::maths::Multidual;
-use crate::simulate::{move_covariance, move_means};
 
 /// `E`, `K` and the change of the mean for one model after some years.
 pub(super) struct System {
@@ -25,15 +25,9 @@ struct Block {
     mean: Multidual,
 }
 
-/// Mean and covariance of the factors' moves.
-struct FactorMoves {
-    mean: Vec<f64>,
-    covariance: Vec<f64>,
-}
-
 impl System {
     pub(super) fn of(model: &Model, years: f64) -> Self {
-        let moves = FactorMoves { mean: move_means(model, years), covariance: move_covariance(model, years) };
+        let moves = FactorMoves::over(model, years);
         let products: Vec<Product> = products(model, years)
             .into_iter()
             .filter(|product| product.moves != Moves::default() && product.coefficient != 0.0)
@@ -62,24 +56,33 @@ impl System {
         (variance, weights.iter().enumerate().map(|(row, k)| k.abs() * own(row)).sum())
     }
 
-    /// Third central moment. `trace((E K)^3)` is the sum over all cells of `(E K) E` times `K (E K)`, both symmetric,
-    /// so that one triangle is enough.
+    /// Third central moment.
     pub(super) fn third_central(&self) -> f64 {
+        3.0 * self.met_twice() + self.trace_of_cube()
+    }
+
+    /// `s' K s`.
+    fn met_twice(&self) -> f64 {
         let spread = self.spread(&self.weights());
         let mut sum = 0.0;
         for block in &self.blocks {
-            for row in 0..block.size {
-                for column in 0..block.size {
-                    sum += 3.0
-                        * block.at(row, column)
-                        * spread[block.first + row]
-                        * spread[block.first + column];
+            let spread = &spread[block.first..block.first + block.size];
+            for (row, left) in spread.iter().enumerate() {
+                for (column, right) in spread.iter().enumerate() {
+                    sum += block.at(row, column) * left * right;
                 }
             }
         }
+        sum
+    }
+
+    /// `trace((E K)^3)`: the sum over all cells of `(E K) E` times `K (E K)`, both symmetric, so that one triangle is
+    /// enough.
+    fn trace_of_cube(&self) -> f64 {
         let right = self.covariance_times_blocks();
         let both = self.blocks_times(&right);
         let mut cells = vec![0.0; self.size];
+        let mut sum = 0.0;
         for row in 0..self.size {
             let cells = &mut cells[..=row];
             cells.fill(0.0);
@@ -177,48 +180,4 @@ impl Block {
     fn at(&self, row: usize, column: usize) -> f64 {
         if row & column == 0 { self.mean.at((self.size - 1) ^ (row | column)) } else { 0.0 }
     }
-}
-
-impl FactorMoves {
-    fn covariance(&self, left: &[usize], right: &[usize]) -> f64 {
-        let n = self.mean.len();
-        left.iter().flat_map(|row| right.iter().map(move |column| self.covariance[row * n + column])).sum()
-    }
-
-    /// `E[y] + Var(y) / 2` for `y = sum of log moves + sum over level moves of e_i x_i`.
-    fn exponent(&self, moves: &Moves) -> Multidual {
-        let mut exponent = Multidual::zero(moves.levels.len() as u32);
-        let mean: f64 = moves.logs.iter().map(|log| self.mean[*log]).sum();
-        exponent.add(0, mean + self.covariance(&moves.logs, &moves.logs) / 2.0);
-        for (symbol, level) in moves.levels.iter().enumerate() {
-            exponent.add(1 << symbol, self.mean[*level] + self.covariance(&moves.logs, &[*level]));
-        }
-        if let [first, second] = moves.levels[..] {
-            exponent.add(3, self.covariance(&[first], &[second]));
-        }
-        exponent
-    }
-
-    /// `Cov(y_left, y_right)`, the symbols of the right one standing above those of the left.
-    fn joint_exponent(&self, left: &Moves, right: &Moves) -> Multidual {
-        let symbols_of_left = left.levels.len();
-        let mut exponent = Multidual::zero((symbols_of_left + right.levels.len()) as u32);
-        for (left_set, left_factors) in components(left) {
-            for (right_set, right_factors) in components(right) {
-                exponent.add(
-                    left_set | (right_set << symbols_of_left),
-                    self.covariance(left_factors, right_factors),
-                );
-            }
-        }
-        exponent
-    }
-}
-
-/// The real part and each nilpotent part of a product's exponent: its set of symbols and the factors in it.
-fn components(moves: &Moves) -> impl Iterator<Item = (usize, &[usize])> {
-    let levels = moves.levels.iter().enumerate();
-    [(0, &moves.logs[..])]
-        .into_iter()
-        .chain(levels.map(|(symbol, level)| (1 << symbol, std::slice::from_ref(level))))
 }
