@@ -69,23 +69,20 @@ fn error_of(low: Option<f64>, high: Option<f64>) -> f64 {
 
 fn fall_rows(answer: &Answer, writer: &Writer) -> Rows {
     let fall = &answer.drawdown;
-    let errors = fall.quantiles.iter().filter_map(|row| row.mean_beyond_error);
-    let writer = writer.within(errors);
-    let row = |label: String, value: f64, spread: String| {
+    let row = |label: String, writer: &Writer, value: f64, spread: String| {
         vec![label, writer.money(value), spread, writer.of_capital(value)]
     };
     let mut rows = vec![writer.head("Largest fall from a peak on the way", "95 % range or error")];
-    rows.push(row("  mean".into(), fall.mean, writer.error(Some(fall.mean_error))));
+    let fine = writer.within([fall.mean_error].into_iter());
+    rows.push(row("  mean".into(), &fine, fall.mean, fine.error(Some(fall.mean_error))));
+    let writer = writer.within(fall.quantiles.iter().filter_map(|row| row.mean_beyond_error));
     for &DrawdownRow { confidence, value, value_low, value_high, mean_beyond, mean_beyond_error } in
         &fall.quantiles
     {
-        rows.push(row(
-            format!("  {} quantile", level(confidence)),
-            value,
-            writer.range(value_low, value_high),
-        ));
+        let label = format!("  {} quantile", level(confidence));
+        rows.push(row(label, &writer, value, writer.range(value_low, value_high)));
         let label = format!("  mean of the worst {}", level(1.0 - confidence));
-        rows.push(row(label, mean_beyond, writer.error(mean_beyond_error)));
+        rows.push(row(label, &writer, mean_beyond, writer.error(mean_beyond_error)));
     }
     rows
 }

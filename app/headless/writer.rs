@@ -42,9 +42,10 @@ impl Writer {
         self.scale.figure(money, self.decimals)
     }
 
-    /// An amount with its unit.
+    /// An amount with its unit: `EUR 4.88 m`.
     pub(super) fn with_unit(&self, money: f64) -> String {
-        format!("{} {}", self.money(money), self.scale.unit(self.currency.as_deref())).trim_end().to_owned()
+        let currency = self.currency.as_deref().unwrap_or_default();
+        format!("{currency} {} {}", self.money(money), self.scale.word).trim().to_owned()
     }
 
     /// A loss; a negative one is a gain and called so.

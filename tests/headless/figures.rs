@@ -32,7 +32,9 @@ fn agree_horizon_and_longer_run_read_at_that_day() {
     let sample = simulate::run(&model, &plan, &Unwatched).unwrap().sample(21).unwrap();
     let confidences = ["0.95", "0.99"].map(|level| level.parse().unwrap()).to_vec();
     let conventions = Conventions { confidences, loss_from: LossFrom::Today, loss_limit };
-    let reading = serde_json::to_value(measures::reading(&model, &sample, &conventions)).unwrap();
+    // Through text as well, so that both sides are parsed alike.
+    let text = serde_json::to_string(&measures::reading(&model, &sample, &conventions)).unwrap();
+    let reading: Value = serde_json::from_str(&text).unwrap();
     let answer = read_json(&["--horizon", "21", "--loss-limit", "4000000"]);
     for part in ["moments", "loss", "drawdown", "limit"] {
         assert_eq!(answer[part], reading[part], "{part}");
