@@ -8,6 +8,7 @@ use crate::desk::inputs::read_figure;
 use crate::desk::plot::axes;
 use crate::desk::theme::{self, Palette};
 use egui::epaint::{Mesh, TextShape};
+use egui::text::{LayoutJob, TextWrapping};
 use egui::{
     Align2, Event, EventFilter, FontFamily, FontId, Id, Key, Modifiers, Painter, Pos2, Rect, Response, Role,
     ScrollArea, Sense, Shape, Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, vec2,
@@ -186,24 +187,12 @@ fn name(painter: &Painter, palette: &Palette, text: &str, is_marked: bool, end: 
         font.family = theme::heavy();
     }
     let ink = if is_marked { palette.ink } else { palette.soft_ink };
-    let short = shortened(painter, text, &font, NAMES_POINTS - 10.0);
-    let galley = painter.layout_no_wrap(short, font, ink);
+    let mut job = LayoutJob::simple_singleline(text.to_owned(), font, ink);
+    job.wrap = TextWrapping::truncate_at_width(NAMES_POINTS - 10.0);
+    let galley = painter.layout_job(job);
     let size = galley.size();
     let at = if angle == 0.0 { end - vec2(size.x, size.y / 2.0) } else { end - vec2(size.y / 2.0, 0.0) };
     painter.add(TextShape { angle, ..TextShape::new(at, galley, ink) });
-}
-
-/// As much of a text as fits, with an ellipsis where something is left out.
-fn shortened(painter: &Painter, text: &str, font: &FontId, width: f32) -> String {
-    let fits = |text: &str| {
-        painter.layout_no_wrap(text.to_owned(), font.clone(), egui::Color32::PLACEHOLDER).size().x <= width
-    };
-    if fits(text) {
-        return text.to_owned();
-    }
-    let ends = text.char_indices().map(|(end, _)| end).rev();
-    let short = ends.map(|end| format!("{}…", text[..end].trim_end())).find(|short| fits(short));
-    short.unwrap_or_default()
 }
 
 /// Arrow keys walk from cell to cell while the map has focus.
