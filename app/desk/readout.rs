@@ -3,6 +3,7 @@
 
 use crate::desk::session::{AtLine, Session};
 use ebbmark_engine::figures::{Scale, grouped, percent};
+use ebbmark_engine::history::date_after;
 use ebbmark_engine::measures::reading::LossRow;
 use jiff::civil::Date;
 
@@ -81,7 +82,7 @@ impl<'a> Money<'a> {
 
     /// Digits of an amount: as its error allows, or three significant ones where it has none.
     fn decimals(&self, money: f64, error_money: f64) -> usize {
-        let error = if error_money > 0.0 { error_money } else { money.abs() / 200.0 };
+        let error = if error_money > 0.0 { error_money } else { money.abs() / 100.0 };
         self.scale.decimals(error).min(if self.scale.size > 1.0 { 4 } else { 2 })
     }
 }
@@ -143,18 +144,22 @@ pub fn date_words(date: Date) -> String {
     date.strftime("%-d %b %Y").to_string()
 }
 
-/// "Read at 21 trading days, to Tue 29 Dec 2026".
-pub fn reading_words(session: &Session) -> String {
+/// "Read at 21 trading days, to Tue 29 Dec 2026", or "21 trading days, to 29 Dec 2026" where there is less room.
+pub fn reading_words(session: &Session, is_full: bool) -> String {
     let day = session.reading_day();
     let days = if day == 1 { "1 trading day".to_owned() } else { format!("{day} trading days") };
-    match horizon_date(session, day) {
-        Some(date) => format!("Read at {days}, to {}", date.strftime("%a %-d %b %Y")),
-        None => format!("Read at {days}"),
-    }
+    let lead = if is_full { "Read at " } else { "" };
+    let weekdays = if session.document().holidays.is_none() { " (weekdays)" } else { "" };
+    let date = horizon_date(session, day).map(|date| {
+        let weekday = if is_full { date.strftime("%a ").to_string() } else { String::new() };
+        format!(", to {weekday}{}{weekdays}", date_words(date))
+    });
+    format!("{lead}{days}{}", date.unwrap_or_default())
 }
 
 /// Date of a day ahead; none where the prices have no date.
 pub fn horizon_date(session: &Session, day: u32) -> Option<Date> {
-    let _ = (session.document().settings.as_of?, day);
-    None
+    let document = session.document();
+    let holidays = document.holidays.as_deref().map_or(&[][..], Vec::as_slice);
+    date_after(document.settings.as_of?, day, holidays)
 }

@@ -106,7 +106,9 @@ impl Palette {
 
     /// Text on the ground of a correlation's cell.
     pub fn on_correlation(&self, value: f64) -> Color32 {
-        if value.abs() > 0.6 { self.panel } else { self.ink }
+        let ground = self.correlation(value).intensity();
+        let apart = |ink: &Color32| (ink.intensity() - ground).abs();
+        if apart(&self.panel) > apart(&self.ink) { self.panel } else { self.ink }
     }
 
     /// A gain or a loss of that sign; text colour at 0.

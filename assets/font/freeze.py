@@ -4,7 +4,7 @@
     python freeze.py Inter_600SemiBold.ttf Inter-SemiBold.ttf
 
 The sources stand in the npm package @expo-google-fonts/inter 0.4.2; needs fonttools. Inter's digits differ in width unless
-its feature tnum is on. The window has no such switch, so the feature's digits and signs become the plain ones.
+its feature tnum is on. The window has no such switch, so the feature's digits become the plain ones.
 """
 
 import sys
@@ -12,7 +12,7 @@ import sys
 from fontTools import subset
 from fontTools.ttLib import TTFont
 
-FIGURES = "0123456789+-\u2212.,"
+FIGURES = "0123456789"
 RANGES = [(0x20, 0x24F), (0x370, 0x45F), (0x1E00, 0x1EFF), (0x2000, 0x20BF)]
 SIGNS = "\u2113\u2122\u2190\u2191\u2192\u2193\u2212\u221a\u221e\u2248\u2260\u2264\u2265\u25b2\u25b6\u25bc\u25c0\u25cf\u26a0"
 

@@ -30,6 +30,8 @@ pub struct NumberField<'a> {
     pub range: RangeInclusive<f64>,
     /// Change per point dragged, as a share of the number's size.
     pub pull: f64,
+    /// Decimals that always stand, zeros too.
+    pub decimals: usize,
     /// Whether it stands as plain text until it is pointed at.
     pub is_quiet: bool,
 }
@@ -37,7 +39,15 @@ pub struct NumberField<'a> {
 impl<'a> NumberField<'a> {
     /// A field of that name and unit for any finite number.
     pub fn new(name: &'a str, unit: &'a str) -> Self {
-        Self { name, unit, shown: Shown::Plain, range: f64::MIN..=f64::MAX, pull: 0.005, is_quiet: false }
+        Self {
+            name,
+            unit,
+            shown: Shown::Plain,
+            range: f64::MIN..=f64::MAX,
+            pull: 0.005,
+            decimals: 0,
+            is_quiet: false,
+        }
     }
 
     /// Shown in that way.
@@ -53,6 +63,11 @@ impl<'a> NumberField<'a> {
     /// Changes by that share of the number's size per point dragged; around zero, by that much.
     pub fn pulled(self, pull: f64) -> Self {
         Self { pull, ..self }
+    }
+
+    /// With at least that many decimals.
+    pub fn decimals(self, decimals: usize) -> Self {
+        Self { decimals, ..self }
     }
 
     /// Plain text until it is pointed at, for tables.
@@ -77,7 +92,7 @@ impl<'a> NumberField<'a> {
             .clamp_existing_to_range(false)
             .update_while_editing(false)
             .max_decimals(if self.shown == Shown::Whole { 0 } else { 6 })
-            .custom_formatter(|number, _| shown_figure(number))
+            .custom_formatter(|number, _| padded_figure(number, self.decimals))
             .custom_parser(read_figure)
             .suffix(suffix);
         let response = ui.scope(|ui| {
@@ -112,6 +127,13 @@ pub fn shown_figure(value: f64) -> String {
         Some(_) => text.trim_end_matches('0').trim_end_matches('.').to_owned(),
         None => text,
     }
+}
+
+/// A figure as it is typed, with at least `decimals` decimals.
+fn padded_figure(value: f64, decimals: usize) -> String {
+    let short = shown_figure(value);
+    let has = short.split_once('.').map_or(0, |(_, decimals)| decimals.len());
+    if has < decimals { grouped(value, decimals) } else { short }
 }
 
 /// A typed figure: thousands separators, blanks, a per cent sign or a unit behind it do no harm.

@@ -19,7 +19,6 @@ pub const HEIGHT_POINTS: f32 = 46.0;
 /// Draws the strip.
 pub fn strip_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     ui.horizontal_centered(|ui| {
-        ui.spacing_mut().item_spacing.x = 18.0;
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
             buttons_ui(ui, session, queue);
             ui.with_layout(Layout::left_to_right(Align::Center), |ui| blocks_ui(ui, session, queue));
@@ -28,8 +27,9 @@ pub fn strip_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
 }
 
 fn blocks_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    ui.spacing_mut().item_spacing.x = 18.0;
     let wide = ui.available_width() > 800.0;
-    block_ui(ui, if wide { 210.0 } else { 150.0 }, |ui| book_ui(ui, session, queue));
+    block_ui(ui, if wide { 200.0 } else { 150.0 }, |ui| book_ui(ui, session, queue));
     let Some((money, at_line)) = Money::of(session).zip(session.live().at_line.as_deref()) else {
         let words =
             if session.faults().is_empty() { "Reading…" } else { "The book has faults and can't be read" };
@@ -37,9 +37,9 @@ fn blocks_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         return;
     };
     let Some(row) = chosen_row(session, at_line) else { return };
-    block_ui(ui, if wide { 270.0 } else { 236.0 }, |ui| headline_ui(ui, session, &money, at_line, row));
+    block_ui(ui, if wide { 330.0 } else { 268.0 }, |ui| headline_ui(ui, session, &money, at_line, row));
     if let Some(limit) = session.document().settings.loss_limit {
-        block_ui(ui, if wide { 150.0 } else { 118.0 }, |ui| limit_ui(ui, at_line, row, limit));
+        block_ui(ui, if wide { 150.0 } else { 112.0 }, |ui| limit_ui(ui, at_line, row, limit));
     }
     block_ui(ui, ui.available_width().clamp(80.0, 180.0), |ui| run_ui(ui, session, queue, at_line, row));
 }
@@ -73,7 +73,10 @@ fn book_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
 /// The chosen VaR in money and per cent, with its range.
 fn headline_ui(ui: &mut Ui, session: &Session, money: &Money<'_>, at_line: &AtLine, row: &LossRow) {
     let palette = Palette::of(ui);
-    ui.add(Label::new(RichText::new(reading_words(session)).color(palette.accent)).truncate());
+    ui.add(
+        Label::new(RichText::new(reading_words(session, ui.available_width() > 300.0)).color(palette.accent))
+            .truncate(),
+    );
     let error = half_range(row.var_low, row.var_high);
     ui.horizontal(|ui| {
         ui.spacing_mut().item_spacing.x = 6.0;

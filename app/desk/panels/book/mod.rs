@@ -34,6 +34,7 @@ pub fn book_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         .id_salt("book")
         .sense(Sense::click())
         .auto_shrink(false)
+        .cell_layout(Layout::left_to_right(Align::Center))
         .column(Column::remainder().clip(true))
         .column(Column::exact(WORTH_POINTS).clip(true))
         .header(22.0, |mut header| {
@@ -122,9 +123,11 @@ fn lines_ui(body: TableBody<'_>, session: &Session, queue: &mut Queue, lines: &[
             });
             row.col(|ui| {
                 right(ui, |ui| {
-                    let text = theme::strong(shown_figure(value.round())).size(theme::SMALL_POINTS + 1.0);
-                    ui.label(text.color(Palette::of(ui).soft_ink));
-                })
+                    let text = if *value == 0.0 { String::new() } else { shown_figure(value.round()) };
+                    ui.label(
+                        theme::strong(text).size(theme::SMALL_POINTS + 1.0).color(Palette::of(ui).soft_ink),
+                    );
+                });
             });
         }
         BookLine::Holding(line) => {
@@ -181,15 +184,15 @@ fn field_ui(
     holding: &Holding,
 ) {
     let accessible = format!("{} of {name}", change.text());
-    let (value, unit) = match change {
+    let (value, unit, decimals) = match change {
         HoldingChange::Quantity(value) if holding.kind == Kind::Cash => {
-            (value, holding.currency.as_deref().unwrap_or(""))
+            (value, holding.currency.as_deref().unwrap_or(""), 0)
         }
-        HoldingChange::Quantity(value) => (value, ""),
-        HoldingChange::Price(value) => (value, price_unit(holding)),
+        HoldingChange::Quantity(value) => (value, "", 0),
+        HoldingChange::Price(value) => (value, price_unit(holding), price_decimals(holding)),
         _ => return,
     };
-    if let Some(value) = NumberField::new(&accessible, unit).quiet().ui(ui, value) {
+    if let Some(value) = NumberField::new(&accessible, unit).decimals(decimals).quiet().ui(ui, value) {
         let change = match change {
             HoldingChange::Price(_) => HoldingChange::Price(value),
             _ => HoldingChange::Quantity(value),
@@ -204,6 +207,13 @@ fn price_unit(holding: &Holding) -> &str {
         (Kind::Level, LevelUnit::Bp) => "bp",
         (Kind::Level, LevelUnit::Points) => "",
         _ => holding.currency.as_deref().unwrap_or(""),
+    }
+}
+
+fn price_decimals(holding: &Holding) -> usize {
+    match (holding.kind, holding.unit.unwrap_or_default()) {
+        (Kind::Spot, _) | (Kind::Level, LevelUnit::Percent) => 2,
+        _ => 0,
     }
 }
 

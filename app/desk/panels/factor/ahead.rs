@@ -32,7 +32,7 @@ pub fn ahead_ui(ui: &mut Ui, session: &Session, model: &Model, factor: &RiskFact
     let (rect, response) = ui.allocate_exact_size(size, Sense::hover());
     let inside = Rect::from_min_max(
         pos2(rect.left() + LEFT_POINTS, rect.top() + 4.0),
-        pos2(rect.right() - 2.0, rect.bottom() - BELOW_POINTS),
+        pos2(rect.right() - 14.0, rect.bottom() - BELOW_POINTS),
     );
     let (low, high) = range(&ahead, factor);
     let key = ui.scope_id().with(("factor range", &factor.name));

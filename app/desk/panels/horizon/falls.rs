@@ -18,7 +18,7 @@ pub fn draw(painter: &Painter, frame: &Frame, palette: &Palette, scene: &Scene<'
     axes::bottom(painter, frame, palette, &day_ticks(frame), true);
     axes::left(painter, frame, palette, &fall_ticks(frame, scene));
     let words = "trading days";
-    let at = pos2(frame.rect.right() + 10.0, frame.rect.bottom() + 5.0);
+    let at = pos2(frame.rect.right() + 20.0, frame.rect.bottom() + 5.0);
     painter.text(at, Align2::LEFT_TOP, words, axes::font(), palette.soft_ink);
     let inside = painter.with_clip_rect(frame.rect.intersect(painter.clip_rect()));
     for (shallow, deep, weight) in [(0, 2, 0.30), (2, 4, 0.15)] {

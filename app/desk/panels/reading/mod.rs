@@ -140,7 +140,7 @@ fn drawdown_ui(ui: &mut Ui, session: &Session, money: &Money<'_>, at_line: &AtLi
     let row = drawdown.quantiles.iter().find(|row| (row.confidence - chosen).abs() < 1e-12);
     if let Some(row) = row {
         let worst = Amount { money: row.mean_beyond, error: row.mean_beyond_error };
-        amount_ui(ui, money, &format!("Mean of the worst {}", percent_words(1.0 - chosen)), &worst);
+        amount_ui(ui, money, &format!("Mean of worst {}", percent_words(1.0 - chosen)), &worst);
     }
 }
 
@@ -159,7 +159,7 @@ fn amount_ui(ui: &mut Ui, money: &Money<'_>, label: &str, amount: &Amount) {
 
 /// A label, then a figure, its share and its error in columns of their own.
 fn line_ui(ui: &mut Ui, label: &str, figures: [&str; 3]) {
-    row_ui(ui, &widths(ui, [62.0, 58.0, 52.0]), 20.0, |ui, column| match column {
+    row_ui(ui, &widths(ui, [58.0, 56.0, 50.0]), 20.0, |ui, column| match column {
         0 => {
             ui.add(Label::new(label).truncate());
         }
@@ -188,7 +188,7 @@ fn limit_ui(ui: &mut Ui, limit: Option<&LimitReading>) {
     };
     for (label, value, error) in [
         ("Passed at the line", limit.at_horizon, limit.at_horizon_error),
-        ("Touched at any time before", limit.by_horizon, limit.by_horizon_error),
+        ("Touched before it", limit.by_horizon, limit.by_horizon_error),
     ] {
         let (figure, error) = chance(value, error);
         line_ui(ui, label, ["", &figure, &error]);
