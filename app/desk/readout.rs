@@ -69,10 +69,13 @@ impl<'a> Money<'a> {
         Some(percent(money / base, percent_decimals(money / base, error_money / base)))
     }
 
-    /// "4.59 to 4.67"; an end that the sample can't give is said to be missing.
+    /// "4.59 – 4.67"; an end that the sample can't give is said to be missing.
     pub fn range(&self, low: Option<f64>, high: Option<f64>, error_money: f64) -> Option<String> {
         let figure = |money: f64| self.figure(money, error_money);
         match (low, high) {
+            (Some(low), Some(high)) if low >= 0.0 => {
+                Some(format!("{} \u{2013} {}", figure(low), figure(high)))
+            }
             (Some(low), Some(high)) => Some(format!("{} to {}", figure(low), figure(high))),
             (Some(low), None) => Some(format!("{} to no upper end", figure(low))),
             (None, Some(high)) => Some(format!("no lower end to {}", figure(high))),
@@ -139,9 +142,9 @@ impl Verdict {
     }
 }
 
-/// "30 Nov 2026".
-pub fn date_words(date: Date) -> String {
-    date.strftime("%-d %b %Y").to_string()
+/// "30 Nov 2026", without the year where there is less room.
+pub fn date_words(date: Date, has_year: bool) -> String {
+    date.strftime(if has_year { "%-d %b %Y" } else { "%-d %b" }).to_string()
 }
 
 /// "Read at 21 trading days, to Tue 29 Dec 2026", or "21 trading days, to 29 Dec 2026" where there is less room.
@@ -152,7 +155,7 @@ pub fn reading_words(session: &Session, is_full: bool) -> String {
     let weekdays = if session.document().holidays.is_none() { " (weekdays)" } else { "" };
     let date = horizon_date(session, day).map(|date| {
         let weekday = if is_full { date.strftime("%a ").to_string() } else { String::new() };
-        format!(", to {weekday}{}{weekdays}", date_words(date))
+        format!(", to {weekday}{}{weekdays}", date_words(date, true))
     });
     format!("{lead}{days}{}", date.unwrap_or_default())
 }

@@ -18,6 +18,9 @@ pub const HEADING_POINTS: f32 = 15.0;
 /// Side of the strip's headline figure, in points.
 pub const HEADLINE_POINTS: f32 = 20.0;
 
+/// Room for a scroll bar beside what it scrolls.
+pub const SCROLL_POINTS: f32 = 10.0;
+
 /// Colours by what they stand for. Losses are vermilion, gains blue, everything neutral slate; the three
 /// differ in lightness too, so that they part under every common kind of colour blindness.
 #[derive(Debug, Clone, Copy, PartialEq)]

@@ -7,6 +7,8 @@ pub mod book;
 pub mod correlation;
 /// The chosen risk factor.
 pub mod factor;
+/// The chosen holding.
+pub mod holding;
 /// The bands ahead.
 pub mod horizon;
 /// Messages.
@@ -33,10 +35,13 @@ pub fn window_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     let width = ui.available_width();
     let bare = Frame::new().fill(Palette::of(ui).window);
     let strip = bare.inner_margin(Margin::symmetric(14, 4));
-    Panel::top("strip").frame(strip).show_separator_line(true).show(ui, |ui| {
-        ui.set_height(strip::HEIGHT_POINTS);
-        strip::strip_ui(ui, session, queue);
-    });
+    Panel::top("strip").frame(strip).exact_size(strip::HEIGHT_POINTS + 10.0).show_separator_line(true).show(
+        ui,
+        |ui| {
+            ui.set_height(strip::HEIGHT_POINTS);
+            strip::strip_ui(ui, session, queue);
+        },
+    );
     Panel::bottom("foot").frame(bare.inner_margin(Margin::symmetric(14, 3))).show_separator_line(false).show(
         ui,
         |ui| {
@@ -46,18 +51,19 @@ pub fn window_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     let side = |share: f32, least: f32, most: f32| (width * share).clamp(least, most);
     Panel::left("left")
         .frame(bare.inner_margin(Margin { left: 8, right: 4, top: 8, bottom: 0 }))
-        .default_size(side(0.26, 300.0, 380.0))
-        .size_range(260.0..=520.0)
+        .default_size(side(0.26, 290.0, 380.0))
+        .size_range(260.0..=(width * 0.28).max(290.0))
         .show_separator_line(false)
         .show(ui, |ui| left_ui(ui, session, queue));
     Panel::right("right")
         .frame(bare.inner_margin(Margin { left: 4, right: 8, top: 8, bottom: 0 }))
-        .default_size(side(0.245, 290.0, 350.0))
-        .size_range(270.0..=480.0)
+        .default_size(side(0.25, 290.0, 350.0))
+        .size_range(260.0..=(width * 0.275).max(290.0))
         .show_separator_line(false)
         .show(ui, |ui| {
             card_ui(ui, |ui| {
                 ScrollArea::vertical().id_salt("reading").auto_shrink(false).show(ui, |ui| {
+                    ui.set_max_width(ui.available_width() - theme::SCROLL_POINTS);
                     reading::reading_ui(ui, session, queue);
                     notices::notices_ui(ui, session, queue);
                 });
@@ -77,11 +83,19 @@ fn left_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     let bare = Frame::new().inner_margin(Margin { top: 8, ..Margin::ZERO });
     Panel::bottom("factor")
         .frame(bare)
-        .default_size((height * 0.38).clamp(230.0, 330.0))
+        .default_size((height * 0.4).clamp(240.0, 350.0))
         .size_range(150.0..=(height - 160.0).max(160.0))
         .resizable(true)
         .show_separator_line(false)
-        .show(ui, |ui| card_ui(ui, |ui| factor::factor_ui(ui, session, queue)));
+        .show(ui, |ui| {
+            card_ui(ui, |ui| {
+                if holding::switch_ui(ui) {
+                    holding::holding_ui(ui, session, queue);
+                } else {
+                    factor::factor_ui(ui, session, queue);
+                }
+            });
+        });
     card_ui(ui, |ui| book::book_ui(ui, session, queue));
 }
 

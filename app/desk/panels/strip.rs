@@ -16,20 +16,27 @@ use egui::{Align, Button, FontId, Label, Layout, ProgressBar, Rect, RichText, Se
 /// Height of the strip, margins left out.
 pub const HEIGHT_POINTS: f32 = 46.0;
 
+/// Below this width the buttons stand in two rows.
+const NARROW_POINTS: f32 = 1280.0;
+
+/// Width of the buttons in two rows.
+const NARROW_BUTTONS_POINTS: f32 = 184.0;
+
 /// Draws the strip.
 pub fn strip_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    let is_narrow = ui.available_width() < NARROW_POINTS;
     ui.horizontal_centered(|ui| {
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            buttons_ui(ui, session, queue);
+            buttons_ui(ui, session, queue, is_narrow);
             ui.with_layout(Layout::left_to_right(Align::Center), |ui| blocks_ui(ui, session, queue));
         });
     });
 }
 
 fn blocks_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    ui.spacing_mut().item_spacing.x = 18.0;
-    let wide = ui.available_width() > 800.0;
-    block_ui(ui, if wide { 200.0 } else { 150.0 }, |ui| book_ui(ui, session, queue));
+    ui.spacing_mut().item_spacing.x = 16.0;
+    let room = ui.available_width();
+    block_ui(ui, (room * 0.2).clamp(150.0, 210.0), |ui| book_ui(ui, session, queue));
     let Some((money, at_line)) = Money::of(session).zip(session.live().at_line.as_deref()) else {
         let words =
             if session.faults().is_empty() { "Reading…" } else { "The book has faults and can't be read" };
@@ -37,11 +44,11 @@ fn blocks_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         return;
     };
     let Some(row) = chosen_row(session, at_line) else { return };
-    block_ui(ui, if wide { 330.0 } else { 268.0 }, |ui| headline_ui(ui, session, &money, at_line, row));
+    block_ui(ui, (room * 0.37).clamp(250.0, 340.0), |ui| headline_ui(ui, session, &money, at_line, row));
     if let Some(limit) = session.document().settings.loss_limit {
-        block_ui(ui, if wide { 150.0 } else { 112.0 }, |ui| limit_ui(ui, at_line, row, limit));
+        block_ui(ui, (room * 0.15).clamp(116.0, 150.0), |ui| limit_ui(ui, at_line, row, limit));
     }
-    block_ui(ui, ui.available_width().clamp(80.0, 180.0), |ui| run_ui(ui, session, queue, at_line, row));
+    block_ui(ui, ui.available_width().clamp(80.0, 190.0), |ui| run_ui(ui, session, queue, at_line, row));
 }
 
 /// Two lines of a fixed width, so that nothing moves when figures change.
@@ -64,8 +71,11 @@ fn book_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     }
     let Some(model) = session.live().model.as_deref() else { return };
     let currency = model.currency.as_deref().map(|code| format!("{code} ")).unwrap_or_default();
-    let at =
-        document.settings.as_of.map(|date| format!(" \u{00b7} {}", date_words(date))).unwrap_or_default();
+    let at = document
+        .settings
+        .as_of
+        .map(|date| format!(" \u{00b7} {}", date_words(date, ui.available_width() > 190.0)))
+        .unwrap_or_default();
     let value = Label::new(format!("{currency}{}{at}", grouped(model.value, 0))).truncate();
     ui.add(value).on_hover_text("Value of the book today, at the prices of this date");
 }
@@ -139,7 +149,7 @@ fn run_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, at_line: &AtLine, r
                 .desired_width(ui.available_width() - 52.0)
                 .desired_height(8.0);
             ui.add(bar).accessible_name("Paths done");
-            command_ui(ui, queue, Command::StopRun);
+            small_ui(ui, queue, Command::StopRun);
         });
     } else {
         let done = grouped(at_line.paths.unwrap_or(0) as f64, 0);
@@ -148,7 +158,7 @@ fn run_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, at_line: &AtLine, r
     ui.horizontal(|ui| {
         ui.add(Label::new(theme::soft(ui, state_words(session, at_line, row))).truncate());
         if live.state == RunState::Stopped {
-            command_ui(ui, queue, Command::RunAgain);
+            small_ui(ui, queue, Command::RunAgain);
         }
     });
 }
@@ -174,24 +184,50 @@ fn state_words(session: &Session, at_line: &AtLine, row: &LossRow) -> String {
     }
 }
 
-/// Drawn from right to left.
-fn buttons_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    ui.spacing_mut().item_spacing.x = 4.0;
+/// All buttons in one row, or in two where room is short.
+fn buttons_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, is_narrow: bool) {
+    ui.spacing_mut().item_spacing = vec2(4.0, 3.0);
     let wear = Command::WearTheme(match session.view().theme {
         Theme::Light => Theme::Dark,
         Theme::Dark => Theme::Light,
     });
-    command_ui(ui, queue, wear);
-    undo_ui(ui, queue, Command::Redo, session.redo_text());
-    undo_ui(ui, queue, Command::Undo, session.undo_text());
-    export_ui(ui, queue);
-    command_ui(ui, queue, Command::Save);
-    command_ui(ui, queue, Command::AskPath(PathPurpose::Open));
+    let open = Command::AskPath(PathPurpose::Open);
+    if !is_narrow {
+        // Drawn from right to left.
+        command_ui(ui, queue, wear);
+        undo_ui(ui, queue, Command::Redo, session.redo_text());
+        undo_ui(ui, queue, Command::Undo, session.undo_text());
+        export_ui(ui, queue);
+        command_ui(ui, queue, Command::Save);
+        command_ui(ui, queue, open);
+        return;
+    }
+    let row = vec2(NARROW_BUTTONS_POINTS, 22.0);
+    ui.allocate_ui_with_layout(vec2(row.x, HEIGHT_POINTS), Layout::top_down(Align::Min), |ui| {
+        ui.allocate_ui_with_layout(row, Layout::left_to_right(Align::Center), |ui| {
+            command_ui(ui, queue, open);
+            command_ui(ui, queue, Command::Save);
+            export_ui(ui, queue);
+        });
+        ui.allocate_ui_with_layout(row, Layout::left_to_right(Align::Center), |ui| {
+            undo_ui(ui, queue, Command::Undo, session.undo_text());
+            undo_ui(ui, queue, Command::Redo, session.redo_text());
+            command_ui(ui, queue, wear);
+        });
+    });
 }
 
 fn command_ui(ui: &mut Ui, queue: &mut Queue, command: Command) {
     let tooltip = command.tooltip(ui.ctx());
     if ui.button(command.text()).on_hover_text(tooltip).clicked() {
+        queue.push(command);
+    }
+}
+
+/// A button that is no taller than a line of text.
+fn small_ui(ui: &mut Ui, queue: &mut Queue, command: Command) {
+    ui.spacing_mut().interact_size.y = 16.0;
+    if ui.small_button(command.text()).on_hover_text(command.tooltip(ui.ctx())).clicked() {
         queue.push(command);
     }
 }

@@ -14,7 +14,7 @@ const PICTURE_POINTS: f32 = 120.0;
 /// Draws the editor of the cell.
 pub fn cell_ui(ui: &mut Ui, queue: &mut Queue, matrix: &Matrix<'_>, (row, column): (usize, usize)) {
     ui.horizontal_wrapped(|ui| {
-        let width = ((ui.available_width() - 330.0) / 2.0).clamp(90.0, 170.0);
+        let width = ((ui.available_width() - 400.0) / 2.0).clamp(90.0, 170.0);
         factor_ui(ui, queue, matrix, "First factor", width, row, |row| (row, column));
         ui.label(theme::soft(ui, "and"));
         factor_ui(ui, queue, matrix, "Second factor", width, column, |column| (row, column));

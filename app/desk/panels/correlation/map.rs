@@ -10,8 +10,8 @@ use crate::desk::theme::{self, Palette};
 use egui::epaint::{Mesh, TextShape};
 use egui::text::{LayoutJob, TextWrapping};
 use egui::{
-    Align2, Event, EventFilter, FontFamily, FontId, Id, Key, Modifiers, Painter, Pos2, Rect, Response, Role,
-    ScrollArea, Sense, Shape, Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, vec2,
+    Align2, Event, EventFilter, FontFamily, FontId, Id, Key, Label, Modifiers, Painter, Pos2, Rect, Response,
+    Role, ScrollArea, Sense, Shape, Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, vec2,
 };
 
 /// Smallest square that holds a number.
@@ -42,7 +42,8 @@ pub fn map_ui(ui: &mut Ui, queue: &mut Queue, matrix: &Matrix<'_>, chosen: (usiz
                 ui.data_mut(|data| data.insert_temp(zoom_id, zoomed));
             }
         }
-        ui.label(theme::soft(ui, "Hover or walk with the arrow keys to read a cell; type to set it"));
+        let words = "Point or walk with the arrow keys to read a cell, type to set it";
+        ui.add(Label::new(theme::soft(ui, words)).truncate());
     });
     if is_zoomed {
         ScrollArea::both().id_salt("map").auto_shrink(false).show(ui, |ui| {
@@ -117,10 +118,9 @@ fn paint(ui: &Ui, matrix: &Matrix<'_>, grid: &Grid, chosen: (usize, usize), poin
     let mut mesh = Mesh::default();
     for row in 0..grid.size {
         for column in 0..grid.size {
-            mesh.add_colored_rect(
-                grid.cell(row, column).shrink(gap),
-                palette.correlation(matrix.at(row, column)),
-            );
+            let fill =
+                if row == column { palette.hairline } else { palette.correlation(matrix.at(row, column)) };
+            mesh.add_colored_rect(grid.cell(row, column).shrink(gap), fill);
         }
     }
     painter.add(Shape::mesh(mesh));

@@ -19,7 +19,10 @@ const MOST_LOG_VOLATILITY: f64 = 5.0;
 
 /// Draws the factor chosen in the session, or the first.
 pub fn factor_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let Some(model) = session.live().model.as_deref() else { return };
+    let Some(model) = session.live().model.as_deref() else {
+        ui.label(theme::soft(ui, "The risk factors are shown here once the book can be read"));
+        return;
+    };
     let chosen = session.view().factor.as_deref();
     let named = chosen.and_then(|name| model.factors.iter().find(|factor| factor.name == name));
     let Some(factor) = named.or(model.factors.first()) else {

@@ -7,32 +7,57 @@ use crate::desk::theme;
 use crate::workspace::document::LONGEST_HORIZON_DAYS;
 use egui::{Align, Button, Layout, Ui};
 
-/// Draws the row below the charts.
+/// Narrower than this, the row becomes two.
+const NARROW_POINTS: f32 = 600.0;
+/// Height of a row.
+const ROW_POINTS: f32 = 29.0;
+
+/// Height of what `choices_ui` draws in a width.
+pub fn height(width: f32) -> f32 {
+    if width < NARROW_POINTS { 2.0 * ROW_POINTS } else { ROW_POINTS }
+}
+
+/// Draws the rows below the charts.
 pub fn choices_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let settings = &session.document().settings;
+    let is_narrow = ui.available_width() < NARROW_POINTS;
     ui.horizontal(|ui| {
         ui.spacing_mut().item_spacing.x = 4.0;
-        ui.label(theme::soft(ui, "Read at"));
-        for (words, day) in choices(settings.days_per_year) {
-            let is_chosen = session.reading_day() == day;
-            let button = Button::selectable(is_chosen, words);
-            let response = ui.add(button).accessible_name(format!("Read at {words}"));
-            if response.on_hover_text(format!("Move the reading line to {day} trading days")).clicked() {
-                if day > settings.horizon_days {
-                    queue.push(Command::ChangeSetting(SettingChange::HorizonDays(day)));
-                }
-                queue.push(Command::ChangeSetting(SettingChange::ReadingDay(day)));
-            }
+        days_ui(ui, session, queue);
+        if !is_narrow {
+            ui.with_layout(Layout::right_to_left(Align::Center), |ui| length_ui(ui, session, queue));
         }
-        ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            let range = 1.0..=f64::from(LONGEST_HORIZON_DAYS);
-            let field = NumberField::new("Horizon", "days").shown(Shown::Whole).range(range);
-            if let Some(days) = field.ui(ui, f64::from(settings.horizon_days)) {
-                queue.push(Command::ChangeSetting(SettingChange::HorizonDays(days.round() as u32)));
-            }
-            ui.label(theme::soft(ui, "Look ahead"));
-        });
     });
+    if is_narrow {
+        ui.with_layout(Layout::right_to_left(Align::Min), |ui| length_ui(ui, session, queue));
+    }
+}
+
+/// The reading line at one press.
+fn days_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    let settings = &session.document().settings;
+    ui.label(theme::soft(ui, "Read at"));
+    for (words, day) in choices(settings.days_per_year) {
+        let button = Button::selectable(session.reading_day() == day, words);
+        let response = ui.add(button).accessible_name(format!("Read at {words}"));
+        if response.on_hover_text(format!("Move the reading line to {day} trading days")).clicked() {
+            if day > settings.horizon_days {
+                queue.push(Command::ChangeSetting(SettingChange::HorizonDays(day)));
+            }
+            queue.push(Command::ChangeSetting(SettingChange::ReadingDay(day)));
+        }
+    }
+}
+
+/// How far ahead the window looks; drawn from right to left.
+fn length_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    let range = 1.0..=f64::from(LONGEST_HORIZON_DAYS);
+    let field = NumberField::new("Horizon", "days").shown(Shown::Whole).range(range);
+    let (response, days) = field.response_ui(ui, f64::from(session.document().settings.horizon_days));
+    response.on_hover_text("Length of the horizon, up to two years");
+    if let Some(days) = days {
+        queue.push(Command::ChangeSetting(SettingChange::HorizonDays(days.round() as u32)));
+    }
+    ui.label(theme::soft(ui, "Look ahead"));
 }
 
 /// Words and trading days, months and years by the days in a year.

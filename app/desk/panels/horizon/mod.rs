@@ -38,12 +38,12 @@ pub fn horizon_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         ui.centered_and_justified(|ui| ui.label(theme::soft(ui, "No figures yet")));
         return;
     };
-    let choices_height = 30.0;
+    let choices_height = choices::height(ui.available_width());
     let (rect, _) = ui.allocate_exact_size(ui.available_size() - vec2(0.0, choices_height), Sense::hover());
     let places = Places::within(rect);
     let frames = frames(ui, &places, &scene);
-    title_ui(ui, places.upper_title, &scene.upper_title(), &scene.legend());
-    title_ui(ui, places.lower_title, &scene.lower_title(), "not passed by 50, 90 and 99 % of paths");
+    title_ui(ui, places.upper_title, &scene.upper_title(), scene.legend());
+    title_ui(ui, places.lower_title, &scene.lower_title(), "not passed by 50, 90, 99 %");
     let palette = Palette::of(ui);
     ahead::draw(ui.painter(), &frames.ahead, palette, &scene, CHANGE_POINTS);
     beside::draw_values(ui.painter(), &frames.values, palette, &scene);

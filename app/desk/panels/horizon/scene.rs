@@ -114,14 +114,13 @@ impl<'a> Scene<'a> {
     }
 
     /// What the shades hold, and where the figures come from.
-    pub fn legend(&self) -> String {
-        let source = match (self.is_before_edit, self.at_line.paths) {
-            (true, _) => "from before the edit",
+    pub fn legend(&self) -> &'static str {
+        match (self.is_before_edit, self.at_line.paths) {
+            (true, _) => "\u{26a0} from before the edit",
             (false, None) => "closed form until paths arrive",
             (false, Some(_)) if self.bands.is_closed_form => "closed form until paths arrive",
-            _ => "on each day by itself",
-        };
-        format!("shades hold 50, 90 and 98 % of paths, {source}")
+            _ => "50, 90 and 98 % of paths on each day",
+        }
     }
 
     /// "99 % VaR 4.63".

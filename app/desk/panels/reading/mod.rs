@@ -51,7 +51,7 @@ fn heading_ui(ui: &mut Ui, session: &Session) {
 fn loss_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, money: &Money<'_>, at_line: &AtLine) {
     let chosen = chosen_row(session, at_line).map(|row| row.confidence);
     let levels = &session.document().settings.confidences;
-    let others = ((ui.available_width() - 58.0) / 3.0).min(110.0);
+    let others = ((ui.available_width() - 52.0) / 3.0).min(110.0);
     let widths = widths(ui, [others; 3]);
     row_ui(ui, &widths, 18.0, |ui, column| {
         let (title, explanation) = COLUMNS[column];
@@ -159,7 +159,7 @@ fn amount_ui(ui: &mut Ui, money: &Money<'_>, label: &str, amount: &Amount) {
 
 /// A label, then a figure, its share and its error in columns of their own.
 fn line_ui(ui: &mut Ui, label: &str, figures: [&str; 3]) {
-    row_ui(ui, &widths(ui, [58.0, 56.0, 50.0]), 20.0, |ui, column| match column {
+    row_ui(ui, &widths(ui, [46.0, 52.0, 46.0]), 20.0, |ui, column| match column {
         0 => {
             ui.add(Label::new(label).truncate());
         }
@@ -191,7 +191,17 @@ fn limit_ui(ui: &mut Ui, limit: Option<&LimitReading>) {
         ("Touched before it", limit.by_horizon, limit.by_horizon_error),
     ] {
         let (figure, error) = chance(value, error);
-        line_ui(ui, label, ["", &figure, &error]);
+        row_ui(ui, &widths(ui, [56.0, 46.0]), 20.0, |ui, column| match column {
+            0 => {
+                ui.add(Label::new(label).truncate());
+            }
+            1 => {
+                ui.label(&figure);
+            }
+            _ => {
+                ui.label(theme::soft(ui, &error));
+            }
+        });
     }
 }
 
@@ -202,7 +212,7 @@ fn split_ui(ui: &mut Ui, money: &Money<'_>, reading: &Reading) {
     line_ui(ui, "Expected change", [&money.change(change, 0.0), &share, ""]);
     if let Some(sd) = reading.moments.sd.exact.or(reading.moments.sd.sampled) {
         let share = money.share(sd, 0.0).unwrap_or_default();
-        line_ui(ui, "Dispersion round it", [&money.figure(sd, 0.0), &share, ""]);
+        line_ui(ui, "Dispersion", [&money.figure(sd, 0.0), &share, ""]);
     }
 }
 
