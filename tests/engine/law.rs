@@ -91,21 +91,45 @@ fn law_of_the_largest_fall() {
     assert!(distance < KOLMOGOROV_999, "distance {distance}");
 }
 
+/// The reference book on steps of `parts` to a day, with a level held abroad.
+fn book_in_steps(parts: f64) -> Model {
+    let reference = reference_book();
+    let factors = [reference.factors, vec![geometric(1.2, 0.0, 0.1)]].concat();
+    let mut book = model(
+        factors,
+        &[(0, 1, 0.5), (0, 2, -0.3), (1, 2, 0.2), (3, 0, 0.3)],
+        vec![reference.valuation.parts[0].clone(), part(Some((3, 1.2)), 50.0, &[(2, -60.0)])],
+        1110.0,
+    );
+    book.days_per_year *= parts;
+    book.factors.iter_mut().for_each(|factor| rescale_half_life(factor, DAYS_PER_YEAR * parts));
+    book
+}
+
+/// Asserts that two samples of equal size have one law, by the two-sample distance.
+#[track_caller]
+fn check_alike(left: Vec<f64>, right: Vec<f64>) {
+    let (left, right) = (sorted(left), sorted(right));
+    let n = left.len() as f64;
+    let share = |sample: &[f64], value: f64| sample.partition_point(|other| *other <= value) as f64 / n;
+    let distance =
+        left.iter().map(|value| (share(&left, *value) - share(&right, *value)).abs()).fold(0.0, f64::max);
+    assert!(distance * (n / 2.0).sqrt() < KOLMOGOROV_999, "distance {distance}");
+}
+
 #[test]
 fn law_of_one_step_and_of_252() {
-    // The same year in one step and in 252: one law, by the two-sample distance. The book has every diffusion.
-    let values = |days_per_year: f64, day: u32, seed: u64| {
-        let mut book = reference_book();
-        book.days_per_year = days_per_year;
-        book.factors.iter_mut().for_each(|factor| rescale_half_life(factor, days_per_year));
-        sorted(sample(&book, PATHS, seed, day).values)
-    };
-    let (one, many) = (values(1.0, 1, 31), values(252.0, 252, 37));
-    let share =
-        |sample: &[f64], value: f64| sample.partition_point(|other| *other <= value) as f64 / PATHS as f64;
-    let distance =
-        one.iter().map(|value| (share(&one, *value) - share(&many, *value)).abs()).fold(0.0, f64::max);
-    assert!(distance * (PATHS as f64 / 2.0).sqrt() < KOLMOGOROV_999, "distance {distance}");
+    // The same year in one step and in 252. The book has every diffusion.
+    let values = |parts: f64, day: u32, seed: u64| sample(&book_in_steps(parts), PATHS, seed, day).values;
+    check_alike(values(1.0 / DAYS_PER_YEAR, 1, 31), values(1.0, 252, 37));
+}
+
+#[test]
+fn law_of_falls_on_daily_and_on_finer_steps() {
+    // The bridge within a step makes the step's length irrelevant: a month of 21 days, and of 336 sixteenths.
+    let falls =
+        |parts: u32, seed: u64| sample(&book_in_steps(f64::from(parts)), 20_000, seed, 21 * parts).falls;
+    check_alike(falls(1, 43), falls(16, 47));
 }
 
 #[test]
