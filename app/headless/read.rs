@@ -7,7 +7,6 @@ use super::progress::Progress;
 use super::{source, streams, table};
 use crate::workspace::Document;
 use ebbmark_engine::factors::Model;
-use ebbmark_engine::history::date_after;
 use ebbmark_engine::measures;
 use ebbmark_engine::simulate::{self, Plan, Run};
 use ebbmark_engine::tables::{Notice, NoticeLevel};
@@ -67,8 +66,7 @@ fn answer(
     let reading = measures::reading(&model, &sample, &settings.conventions());
     let seconds = started.elapsed().as_secs_f64();
 
-    let holidays = document.holidays.as_ref().map_or(&[][..], |holidays| holidays.as_slice());
-    let date = settings.as_of.and_then(|today| date_after(today, days, holidays));
+    let date = document.date_of(days);
     notices.extend(model.notices.iter().cloned());
     notices.extend(date.and_then(|_| notice_of_weekdays(document)));
     Ok(Answer {

@@ -1,6 +1,7 @@
 //! A book with everything that decides its figures. How it is looked at lives in `view`; nothing here is computed.
 
 use ebbmark_engine::factors::{Inputs, ModelSettings};
+use ebbmark_engine::history::date_after;
 use ebbmark_engine::measures::{Confidence, Conventions, LossFrom};
 use jiff::civil::Date;
 use std::sync::Arc;
@@ -52,6 +53,14 @@ pub struct Settings {
     pub horizon_days: u32,
     /// Where the reading line stands, trading days, 1 to `horizon_days`: what `ebbmark read` calls the horizon.
     pub reading_day: u32,
+}
+
+impl Document {
+    /// Date of a day ahead; none where the prices have no date.
+    pub fn date_of(&self, day: u32) -> Option<Date> {
+        let holidays = self.holidays.as_deref().map_or([].as_slice(), Vec::as_slice);
+        date_after(self.settings.as_of?, day, holidays)
+    }
 }
 
 impl Settings {

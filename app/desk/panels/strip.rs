@@ -4,7 +4,7 @@
 use crate::desk::commands::{Command, ExportKind, PathPurpose, Queue};
 use crate::desk::inputs::{CommittedText, title_ui};
 use crate::desk::readout::{
-    Money, Verdict, chosen_row, confidence_words, date_words, half_range, reading_words, verdict,
+    Money, Verdict, chosen_row, confidence_words, date_words, half_range, money_of, reading_words, verdict,
 };
 use crate::desk::session::{AtLine, RunState, Session};
 use crate::desk::theme::{self, Palette};
@@ -37,7 +37,7 @@ fn blocks_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     ui.spacing_mut().item_spacing.x = 16.0;
     let room = ui.available_width();
     block_ui(ui, (room * 0.2).clamp(150.0, 210.0), |ui| book_ui(ui, session, queue));
-    let Some((money, at_line)) = Money::of(session).zip(session.live().at_line.as_deref()) else {
+    let Some((money, at_line)) = money_of(session).zip(session.live().at_line.as_deref()) else {
         let words =
             if session.faults().is_empty() { "Reading…" } else { "The book has faults and can't be read" };
         ui.label(words);

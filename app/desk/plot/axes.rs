@@ -1,20 +1,11 @@
 //! Round a chart: its ground, the grid through its ticks, and the ticks' words.
 
-use super::Frame;
+use super::{Frame, Tick};
 use crate::desk::theme::{self, Palette};
 use egui::{Align2, FontFamily, FontId, Painter, Stroke, pos2};
 
 /// Room between a tick's words and the chart.
 const GAP: f32 = 5.0;
-
-/// A tick: its value and its words.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Tick {
-    /// Value on the axis.
-    pub value: f64,
-    /// Words beside it.
-    pub words: String,
-}
 
 /// Draws ground and edge.
 pub fn ground(painter: &Painter, frame: &Frame, palette: &Palette) {
@@ -23,25 +14,14 @@ pub fn ground(painter: &Painter, frame: &Frame, palette: &Palette) {
 }
 
 /// Grid lines across, words on the left.
-pub fn left(painter: &Painter, frame: &Frame, palette: &Palette, ticks: &[Tick]) {
+pub fn left(painter: &Painter, frame: &Frame, palette: &Palette, ticks: &[Tick], has_words: bool) {
     for tick in ticks {
         let y = painter.round_to_pixel_center(frame.y(tick.value));
         painter.hline(frame.rect.x_range(), y, Stroke::new(1.0, palette.grid));
-        painter.text(
-            pos2(frame.rect.left() - GAP, y),
-            Align2::RIGHT_CENTER,
-            &tick.words,
-            font(),
-            palette.soft_ink,
-        );
-    }
-}
-
-/// Grid lines across without words.
-pub fn grid_across(painter: &Painter, frame: &Frame, palette: &Palette, ticks: &[Tick]) {
-    for tick in ticks {
-        let y = painter.round_to_pixel_center(frame.y(tick.value));
-        painter.hline(frame.rect.x_range(), y, Stroke::new(1.0, palette.grid));
+        if has_words {
+            let at = pos2(frame.rect.left() - GAP, y);
+            painter.text(at, Align2::RIGHT_CENTER, &tick.words, font(), palette.soft_ink);
+        }
     }
 }
 

@@ -9,9 +9,9 @@ use egui::{Align2, Color32, FontFamily, FontId, Painter, Pos2, Rect, Shape, Stro
 const DASH: f32 = 5.0;
 
 /// The strip between two edges, each `(across, low, high)`.
-pub fn band(painter: &Painter, frame: &Frame, edges: impl Iterator<Item = (f64, f64, f64)>, color: Color32) {
+pub fn band(painter: &Painter, frame: &Frame, edges: &[[f64; 3]], color: Color32) {
     let mut mesh = Mesh::default();
-    for (across, low, high) in edges.filter(|(a, b, c)| a.is_finite() && b.is_finite() && c.is_finite()) {
+    for [across, low, high] in finite(edges) {
         mesh.colored_vertex(frame.at(across, low), color);
         mesh.colored_vertex(frame.at(across, high), color);
     }
@@ -23,9 +23,9 @@ pub fn band(painter: &Painter, frame: &Frame, edges: impl Iterator<Item = (f64, 
 }
 
 /// The strip between the side and a curve over the side's axis, each `(up, length)`; for distributions on their side.
-pub fn side_band(painter: &Painter, frame: &Frame, curve: impl Iterator<Item = (f64, f64)>, color: Color32) {
+pub fn side_band(painter: &Painter, frame: &Frame, curve: &[[f64; 2]], color: Color32) {
     let mut mesh = Mesh::default();
-    for (up, length) in curve.filter(|(up, length)| up.is_finite() && length.is_finite()) {
+    for [up, length] in finite(curve) {
         mesh.colored_vertex(frame.at(frame.across.from, up), color);
         mesh.colored_vertex(frame.at(length, up), color);
     }
@@ -37,12 +37,14 @@ pub fn side_band(painter: &Painter, frame: &Frame, curve: impl Iterator<Item = (
 }
 
 /// A line through `(across, up)`.
-pub fn line(painter: &Painter, frame: &Frame, points: impl Iterator<Item = (f64, f64)>, stroke: Stroke) {
-    let points: Vec<Pos2> = points
-        .filter(|(across, up)| across.is_finite() && up.is_finite())
-        .map(|(across, up)| frame.at(across, up))
-        .collect();
+pub fn line(painter: &Painter, frame: &Frame, points: &[[f64; 2]], stroke: Stroke) {
+    let points: Vec<Pos2> = finite(points).map(|[across, up]| frame.at(across, up)).collect();
     painter.add(Shape::line(points, stroke));
+}
+
+/// Points of which every value is a number.
+fn finite<const N: usize>(points: &[[f64; N]]) -> impl Iterator<Item = [f64; N]> + '_ {
+    points.iter().copied().filter(|point| point.iter().all(|value| value.is_finite()))
 }
 
 /// A dashed line along a value of the side's axis; nothing where it lies outside.

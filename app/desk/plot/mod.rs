@@ -7,10 +7,11 @@ pub mod axes;
 pub mod frame;
 /// Bands, lines, labels.
 pub mod marks;
+/// Panels of the engine's figures.
+pub mod paint;
 /// Ranges that do not jump while figures arrive.
 pub mod settle;
-/// Round numbers along an axis.
-pub mod ticks;
 
-pub use frame::{Frame, Span};
+pub use ebbmark_engine::figures::{Span, Tick, ticks};
+pub use frame::Frame;
 pub use settle::settled;

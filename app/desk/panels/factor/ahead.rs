@@ -1,7 +1,6 @@
 //! Where the chosen factor is headed by itself: its exact mean and its 50 and 90 % bands, as a small chart.
 
-use crate::desk::plot::axes::{self, Tick};
-use crate::desk::plot::{Frame, Span, marks, settled, ticks};
+use crate::desk::plot::{Frame, Span, Tick, axes, marks, settled, ticks};
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
 use ebbmark_engine::book::HalfLife;
@@ -85,18 +84,19 @@ fn range(ahead: &FactorAhead, factor: &RiskFactor) -> (f64, f64) {
 
 fn draw(painter: &Painter, frame: &Frame, palette: &Palette, ahead: &FactorAhead, factor: &RiskFactor) {
     axes::ground(painter, frame, palette);
-    axes::left(painter, frame, palette, &level_ticks(frame));
+    axes::left(painter, frame, palette, &level_ticks(frame), true);
     axes::bottom(painter, frame, palette, &day_ticks(frame), true);
     let inside = painter.with_clip_rect(frame.rect.intersect(painter.clip_rect()));
     let days = || ahead.days.iter().map(|day| f64::from(*day));
     let start = today(factor);
     for (ends, weight) in [(&ahead.ninety, 0.2), (&ahead.half, 0.3)] {
-        let edges = days().zip(ends).map(|(day, ends)| (day, ends[0], ends[1]));
-        let edges = [(0.0, start, start)].into_iter().chain(edges);
-        marks::band(&inside, frame, edges, palette.neutral.gamma_multiply(weight));
+        let edges = days().zip(ends).map(|(day, ends)| [day, ends[0], ends[1]]);
+        let edges: Vec<[f64; 3]> = [[0.0, start, start]].into_iter().chain(edges).collect();
+        marks::band(&inside, frame, &edges, palette.neutral.gamma_multiply(weight));
     }
-    let mean = [(0.0, start)].into_iter().chain(days().zip(ahead.mean.iter().copied()));
-    marks::line(&inside, frame, mean, Stroke::new(1.8, palette.neutral));
+    let mean = days().zip(&ahead.mean).map(|(day, mean)| [day, *mean]);
+    let mean: Vec<[f64; 2]> = [[0.0, start]].into_iter().chain(mean).collect();
+    marks::line(&inside, frame, &mean, Stroke::new(1.8, palette.neutral));
     if let Some(level) = long_run(factor) {
         marks::dashed_level(&inside, frame, level, Stroke::new(1.0, palette.ink));
         let at = pos2(frame.rect.right() - 4.0, frame.y(level) - 1.0);
@@ -107,17 +107,9 @@ fn draw(painter: &Painter, frame: &Frame, palette: &Palette, ahead: &FactorAhead
 fn level_ticks(frame: &Frame) -> Vec<Tick> {
     let step = ticks::step(frame.up, (frame.rect.height() / 24.0) as usize);
     let decimals = ticks::decimals(step);
-    let ticks = ticks::multiples(frame.up, step, 0.0).into_iter();
-    ticks.map(|value| Tick { value, words: grouped(value, decimals) }).collect()
+    ticks::along(frame.up, step, 0.0, |value| grouped(value, decimals))
 }
 
 fn day_ticks(frame: &Frame) -> Vec<Tick> {
-    let step = ticks::day_step(frame.across.to, (frame.rect.width() / 56.0) as usize);
-    let ticks = ticks::multiples(frame.across, step, 0.0).into_iter();
-    ticks
-        .map(|day| Tick {
-            value: day,
-            words: if day == 0.0 { "today".to_owned() } else { format!("{day} d") },
-        })
-        .collect()
+    ticks::days(frame.across, (frame.rect.width() / 56.0) as usize)
 }

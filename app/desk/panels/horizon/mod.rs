@@ -1,25 +1,18 @@
 //! The Horizon view: the book's value ahead with the reading line, its distribution at the line, and below them the
 //! largest fall so far with its own. Places the four charts; each is drawn in a file of its own.
 
-/// The book's value ahead.
-pub mod ahead;
-/// Distributions at the line, beside the charts they belong to.
-pub mod beside;
 /// Horizons at one press, and how far ahead the window looks.
 pub mod choices;
-/// The largest fall so far.
-pub mod falls;
 /// The reading line.
 pub mod line;
-/// What the charts show, as plain data.
-pub mod scene;
 
 use crate::desk::commands::Queue;
-use crate::desk::plot::{Frame, Span, settled};
+use crate::desk::plot::{Frame, Span, paint, settled};
+use crate::desk::readout::subject;
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
+use ebbmark_engine::figures::{Panel, Place, Room, Subject, fall, value};
 use egui::{Align, Label, Layout, Rect, Sense, Ui, pos2, vec2};
-use scene::Scene;
 
 /// Room for the words of the left axis.
 const LEFT_POINTS: f32 = 52.0;
@@ -29,27 +22,36 @@ const CHANGE_POINTS: f32 = 98.0;
 const BELOW_POINTS: f32 = 20.0;
 /// Height of a chart's title.
 const TITLE_POINTS: f32 = 22.0;
+/// Points between ticks, at least: of days, of values, of falls.
+const DAY_TICK_POINTS: f32 = 58.0;
+const VALUE_TICK_POINTS: f32 = 34.0;
+const FALL_TICK_POINTS: f32 = 28.0;
+/// On screen each panel has a room of its own.
+const WHOLE: Place = Place { left: 0.0, top: 0.0, right: 1.0, bottom: 1.0 };
 /// Share of the height that the upper chart has.
 const UPPER_SHARE: f32 = 0.62;
 
 /// Draws the view.
 pub fn horizon_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let Some(scene) = Scene::of(session) else {
+    let live = session.live();
+    let shown = live.model.as_deref().zip(live.bands.as_deref()).zip(live.at_line.as_deref());
+    let Some(((model, bands), at_line)) = shown else {
         ui.centered_and_justified(|ui| ui.label(theme::soft(ui, "No figures yet")));
         return;
     };
+    let subject = subject(session.document(), model, bands, at_line);
     let choices_height = choices::height(ui.available_width());
     let (rect, _) = ui.allocate_exact_size(ui.available_size() - vec2(0.0, choices_height), Sense::hover());
     let places = Places::within(rect);
-    let frames = frames(ui, &places, &scene);
-    title_ui(ui, places.upper_title, &scene.upper_title(), scene.legend());
-    title_ui(ui, places.lower_title, &scene.lower_title(), "not passed by 50, 90, 99 %");
+    let charts = Charts::of(ui, &places, &subject);
+    let note = if live.is_before_edit { "\u{26a0} from before the edit" } else { &charts.ahead.1.note };
+    title_ui(ui, places.upper_title, &charts.ahead.1.title, note);
+    title_ui(ui, places.lower_title, &charts.falls.1.title, &charts.falls.1.note);
     let palette = Palette::of(ui);
-    ahead::draw(ui.painter(), &frames.ahead, palette, &scene, CHANGE_POINTS);
-    beside::draw_values(ui.painter(), &frames.values, palette, &scene);
-    falls::draw(ui.painter(), &frames.falls, palette, &scene);
-    beside::draw_falls(ui.painter(), &frames.fall_sizes, palette, &scene);
-    line::line_ui(ui, session, queue, &frames.ahead, &frames.falls);
+    for (frame, panel) in [&charts.ahead, &charts.values, &charts.falls, &charts.fall_sizes] {
+        paint::panel(ui.painter(), frame, palette, panel, CHANGE_POINTS - 10.0);
+    }
+    line::line_ui(ui, session, queue, &charts.ahead.0, &charts.falls.0);
     choices::choices_ui(ui, session, queue);
 }
 
@@ -88,36 +90,38 @@ impl Places {
     }
 }
 
-/// The scales of the four charts.
-struct Frames {
-    ahead: Frame,
-    values: Frame,
-    falls: Frame,
-    fall_sizes: Frame,
+/// The four charts with their scales.
+struct Charts {
+    ahead: (Frame, Panel),
+    values: (Frame, Panel),
+    falls: (Frame, Panel),
+    fall_sizes: (Frame, Panel),
 }
 
-fn frames(ui: &Ui, places: &Places, scene: &Scene<'_>) -> Frames {
-    let key = |name: &str| ui.scope_id().with(name);
-    let days = Span::new(0.0, f64::from(scene.last_day));
-    let (low, high) = scene.value_range();
-    let values = settled(ui, key("values"), low, high);
-    let deepest = settled(ui, key("falls"), 0.0, scene.deepest_fall());
-    let falls = Span::new(deepest.to, 0.0);
-    let most = |curve: &[f64]| curve.iter().copied().fold(0.0, f64::max) * 1.08;
-    Frames {
-        ahead: Frame { rect: places.ahead, across: days, up: values },
-        values: Frame {
-            rect: places.values,
-            across: Span::new(0.0, most(&scene.at_line.values.density)),
-            up: values,
-        },
-        falls: Frame { rect: places.falls, across: days, up: falls },
-        fall_sizes: Frame {
-            rect: places.fall_sizes,
-            across: Span::new(0.0, most(&scene.at_line.falls.density)),
-            up: falls,
-        },
+impl Charts {
+    /// The charts in the room they have; their ranges stand still while figures arrive.
+    fn of(ui: &Ui, places: &Places, subject: &Subject<'_>) -> Self {
+        let key = |name: &str| ui.scope_id().with(name);
+        let (low, high) = subject.value_range();
+        let values = settled(ui, key("values"), low, high);
+        let deepest = settled(ui, key("falls"), 0.0, subject.deepest_fall());
+        let falls = Span::new(deepest.to, 0.0);
+        let (upper, lower) = (room(places.ahead, VALUE_TICK_POINTS), room(places.falls, FALL_TICK_POINTS));
+        Self {
+            ahead: chart(places.ahead, value::ahead(subject, values, upper, WHOLE)),
+            values: chart(places.values, value::beside(subject, values, upper, WHOLE)),
+            falls: chart(places.falls, fall::so_far(subject, falls, lower, WHOLE)),
+            fall_sizes: chart(places.fall_sizes, fall::beside(subject, falls, lower, WHOLE)),
+        }
     }
+}
+
+fn chart(rect: Rect, panel: Panel) -> (Frame, Panel) {
+    (Frame { rect, across: panel.across.span, up: panel.up.span }, panel)
+}
+
+fn room(rect: Rect, tick_points: f32) -> Room {
+    Room { across: (rect.width() / DAY_TICK_POINTS) as usize, up: (rect.height() / tick_points) as usize }
 }
 
 fn title_ui(ui: &mut Ui, rect: Rect, title: &str, explanation: &str) {

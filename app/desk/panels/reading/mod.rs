@@ -6,7 +6,7 @@ pub mod settings;
 
 use crate::desk::commands::{Command, Queue, SettingChange};
 use crate::desk::inputs::{row_ui, widths};
-use crate::desk::readout::{Money, chosen_row, confidence_words, half_range, signed};
+use crate::desk::readout::{Money, chosen_row, confidence_words, half_range, money_of, signed};
 use crate::desk::session::{AtLine, Session};
 use crate::desk::theme::{self, section_ui};
 use ebbmark_engine::figures::{amounts::decimals_for, grouped, percent};
@@ -20,7 +20,7 @@ const RANGE_ERRORS: f64 = 1.96;
 /// Draws the panel.
 pub fn reading_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     heading_ui(ui, session);
-    if let Some((money, at_line)) = Money::of(session).zip(session.live().at_line.as_deref()) {
+    if let Some((money, at_line)) = money_of(session).zip(session.live().at_line.as_deref()) {
         loss_ui(ui, session, queue, &money, at_line);
         settings::confidences_ui(ui, session, queue);
         section_ui(ui, "Largest fall from a peak");
@@ -41,7 +41,7 @@ fn heading_ui(ui: &mut Ui, session: &Session) {
     ui.horizontal(|ui| {
         ui.label(theme::heading("Reading"));
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            let unit = Money::of(session).map(|money| money.unit()).unwrap_or_default();
+            let unit = money_of(session).map(|money| money.unit()).unwrap_or_default();
             ui.label(theme::soft(ui, unit));
         });
     });

@@ -1,6 +1,6 @@
 //! Round numbers along an axis: 1, 2 or 5 times a power of ten, as many as there is room for.
 
-use super::Span;
+use super::{Span, Tick};
 
 /// Most ticks of an axis, whatever is asked for.
 const MOST_TICKS: usize = 60;
@@ -40,6 +40,17 @@ pub fn decimals(step: f64) -> usize {
 pub fn day_step(days: f64, most: usize) -> f64 {
     let steps = [1.0, 2.0, 5.0, 10.0, 21.0, 42.0, 63.0, 126.0, 252.0];
     steps.into_iter().find(|step| days / step <= most.max(1) as f64).unwrap_or(252.0)
+}
+
+/// Multiples of `step` inside a span with their words.
+pub fn along(span: Span, step: f64, origin: f64, words: impl Fn(f64) -> String) -> Vec<Tick> {
+    multiples(span, step, origin).into_iter().map(|value| Tick { value, words: words(value) }).collect()
+}
+
+/// Ticks of a time axis of which at most `most` fit, today among them.
+pub fn days(span: Span, most: usize) -> Vec<Tick> {
+    let step = day_step(span.to, most);
+    along(span, step, 0.0, |day| if day == 0.0 { "today".to_owned() } else { format!("{day}") })
 }
 
 #[cfg(test)]
