@@ -3,6 +3,8 @@
 
 /// A small book, and ways to wait for the worker.
 mod support;
+/// A hand on the window.
+mod hand;
 /// Edits of holdings, factors, correlations and settings.
 mod edits;
 /// Messages.
@@ -13,5 +15,7 @@ mod undo;
 mod kept;
 /// The window by its labels.
 mod window;
+/// Every panel by its labels.
+mod click_panels;
 /// Runs, readings, files.
 mod worker;

@@ -9,6 +9,6 @@ pub mod row;
 pub mod text;
 
 pub use number::{NumberField, Shown};
-pub use number::{field_row_ui, read_figure, shown_figure};
-pub use row::{row_ui, widths};
+pub use number::{read_figure, shown_figure};
+pub use row::{field_row_ui, row_ui, widths};
 pub use text::{CommittedText, optional_figure_ui, search_ui, title_ui};

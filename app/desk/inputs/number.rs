@@ -3,7 +3,7 @@
 
 use crate::desk::theme;
 use ebbmark_engine::figures::grouped;
-use egui::{DragValue, Response, Ui, vec2};
+use egui::{DragValue, Response, Ui};
 use std::ops::RangeInclusive;
 
 /// How a stored number stands on screen.
@@ -145,14 +145,4 @@ pub fn read_figure(text: &str) -> Option<f64> {
         .collect();
     let number = kept.trim_end_matches(|sign: char| sign == '%' || (sign.is_alphabetic() && sign != 'e'));
     number.parse().ok().filter(|value: &f64| value.is_finite())
-}
-
-/// A label in the first column of a form, the field in the second.
-pub fn field_row_ui(ui: &mut Ui, label: &str, field: impl FnOnce(&mut Ui)) {
-    ui.allocate_ui(vec2(ui.available_width(), ui.spacing().interact_size.y), |ui| {
-        ui.horizontal_centered(|ui| {
-            ui.label(theme::soft(ui, label));
-            ui.with_layout(egui::Layout::right_to_left(egui::Align::Center), field);
-        });
-    });
 }

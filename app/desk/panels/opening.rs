@@ -25,7 +25,7 @@ pub fn opening_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
 }
 
 fn path_ui(ui: &Ui, queue: &mut Queue, purpose: PathPurpose) {
-    let modal = Modal::new(Id::unique("path field")).show(ui.ctx(), |ui| {
+    let modal = overlay(ui, "path field").show(ui.ctx(), |ui| {
         ui.set_width(WIDTH_POINTS);
         ui.label(theme::heading(path_title(purpose)));
         ui.label(theme::soft(ui, path_explanation(purpose)));
@@ -57,6 +57,10 @@ fn path_ui(ui: &Ui, queue: &mut Queue, purpose: PathPurpose) {
     if modal.should_close() {
         queue.push(Command::ClosePathField);
     }
+}
+
+fn overlay(ui: &Ui, name: &str) -> Modal {
+    Modal::new(Id::unique(name)).frame(Frame::popup(ui.style()).inner_margin(16.0))
 }
 
 fn path_title(purpose: PathPurpose) -> String {
@@ -100,7 +104,7 @@ fn path_command(purpose: PathPurpose, typed: &str) -> Option<Command> {
 
 /// Every fault with its place; the book shown before is still there.
 fn refusal_ui(ui: &Ui, session: &Session, queue: &mut Queue, refusal: &Refusal) {
-    let modal = Modal::new(Id::unique("refusal")).show(ui.ctx(), |ui| {
+    let modal = overlay(ui, "refusal").show(ui.ctx(), |ui| {
         ui.set_width((ui.ctx().content_rect().width() - 120.0).min(860.0));
         let count = refusal.faults.len();
         let title = if count == 1 {

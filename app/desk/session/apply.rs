@@ -54,10 +54,11 @@ impl Session {
         self.put(Arc::new(document))
     }
 
-    /// The reading line stops at days that can be read.
+    /// The reading line stops at days that can be read, as far as the run at hand reaches.
     fn snapped(&self, command: Command) -> Command {
+        let reach = self.live.days.last().copied().unwrap_or(0);
         match command {
-            Command::ChangeSetting(SettingChange::ReadingDay(day)) => {
+            Command::ChangeSetting(SettingChange::ReadingDay(day)) if day <= reach => {
                 Command::ChangeSetting(SettingChange::ReadingDay(self.live.nearest_day(day)))
             }
             other => other,

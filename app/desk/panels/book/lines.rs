@@ -50,7 +50,7 @@ struct Known<'a> {
 pub fn book_lines(session: &Session) -> Vec<BookLine> {
     let inputs = &session.document().inputs;
     let known = Known::of(session.live().model.as_deref());
-    let filter = session.view().filter.to_lowercase();
+    let filter = session.view().filter.trim().to_lowercase();
     let lines: Vec<HoldingLine> = (inputs.holdings.iter().enumerate())
         .filter(|(_, holding)| is_shown(holding, &filter))
         .map(|(row, holding)| holding_line(session, &known, row, holding))

@@ -11,6 +11,9 @@ use std::ops::RangeInclusive;
 /// Width of the picture of the legal interval.
 const PICTURE_POINTS: f32 = 120.0;
 
+/// An end this close to a round number is that number.
+const SLACK: f64 = 1e-9;
+
 /// Draws the editor of the cell.
 pub fn cell_ui(ui: &mut Ui, queue: &mut Queue, matrix: &Matrix<'_>, (row, column): (usize, usize)) {
     ui.horizontal_wrapped(|ui| {
@@ -69,11 +72,14 @@ fn legal_ui(ui: &mut Ui, value: f64, legal: Option<RangeInclusive<f64>>) {
         ui.label(theme::soft(ui, words).color(palette.loss));
         return;
     };
-    let is_legal = (legal.start() - 1e-9..=legal.end() + 1e-9).contains(&value);
+    let is_legal = (legal.start() - SLACK..=legal.end() + SLACK).contains(&value);
     let (rect, response) = ui.allocate_exact_size(vec2(PICTURE_POINTS, 18.0), Sense::hover());
     picture_ui(ui, rect, value, &legal, is_legal);
-    let words =
-        format!("may be {} to {}", inwards(*legal.start(), f64::ceil), inwards(*legal.end(), f64::floor));
+    let words = format!(
+        "may be {} to {}",
+        inwards(legal.start() - SLACK, f64::ceil),
+        inwards(legal.end() + SLACK, f64::floor)
+    );
     let text = theme::soft(ui, words);
     ui.label(if is_legal { text } else { text.color(palette.loss) });
     response.on_hover_text(
@@ -83,7 +89,7 @@ fn legal_ui(ui: &mut Ui, value: f64, legal: Option<RangeInclusive<f64>>) {
 
 /// Two decimals, rounded into the interval.
 fn inwards(end: f64, round: impl Fn(f64) -> f64) -> String {
-    format!("{:.2}", round(end * 100.0 - f64::EPSILON) / 100.0 + 0.0)
+    format!("{:.2}", round(end * 100.0) / 100.0 + 0.0)
 }
 
 /// From -1 to 1, the legal part thick, the value a mark on it.

@@ -261,16 +261,20 @@ fn type_ui(
     }
 }
 
-/// What was typed in this frame, if it begins a figure.
+/// What was typed in this frame, if it begins a figure; taken, so that the field does not hear it again.
 fn first_figure(ui: &Ui) -> Option<String> {
-    ui.input(|input| {
-        input.events.iter().find_map(|event| match event {
+    ui.input_mut(|input| {
+        let begun = input.events.iter().find_map(|event| match event {
             Event::Text(text)
                 if text.starts_with(|sign: char| sign.is_ascii_digit() || "-.".contains(sign)) =>
             {
                 Some(text.clone())
             }
             _ => None,
-        })
+        });
+        if begun.is_some() {
+            input.events.retain(|event| !matches!(event, Event::Text(_)));
+        }
+        begun
     })
 }

@@ -25,7 +25,7 @@ pub fn reading_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         settings::confidences_ui(ui, session, queue);
         section_ui(ui, "Largest fall from a peak");
         drawdown_ui(ui, session, &money, at_line);
-        section_ui(ui, "Loss limit");
+        section_ui(ui, "Limit and capital");
         settings::limit_ui(ui, session, queue, &money);
         limit_ui(ui, at_line.reading.limit.as_ref());
         section_ui(ui, "Pull and dispersion");
@@ -51,7 +51,7 @@ fn heading_ui(ui: &mut Ui, session: &Session) {
 fn loss_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, money: &Money<'_>, at_line: &AtLine) {
     let chosen = chosen_row(session, at_line).map(|row| row.confidence);
     let levels = &session.document().settings.confidences;
-    let others = ((ui.available_width() - 52.0) / 3.0).min(110.0);
+    let others = ((ui.available_width() - 62.0) / 3.0).min(110.0);
     let widths = widths(ui, [others; 3]);
     row_ui(ui, &widths, 18.0, |ui, column| {
         let (title, explanation) = COLUMNS[column];
