@@ -7,6 +7,8 @@ use std::time::Duration;
 
 /// Time that a person leaves between two moves of the hand, and the window to paint what came of the first.
 const PAUSE: Duration = Duration::from_millis(300);
+/// Time for the first frames of a program, which are the slowest.
+const SETTLING: Duration = Duration::from_secs(1);
 const MOVES_OF_A_DRAG: i32 = 20;
 
 /// The program in its window; it is killed when dropped.
@@ -30,7 +32,12 @@ impl Window {
             let found = xdotool(&["search", "--onlyvisible", "--name", " Ebbmark$"]).ok()?;
             found.lines().next().map(str::to_owned)
         })?;
-        std::thread::sleep(PAUSE);
+        // Keys go to the window that has the focus, which the window manager gives in its own time.
+        wait_for("the focus", || {
+            xdotool(&["windowactivate", "--sync", &window.id]).ok()?;
+            xdotool(&["getactivewindow"]).ok().filter(|active| active.trim() == window.id)
+        })?;
+        std::thread::sleep(SETTLING);
         Ok(window)
     }
 
