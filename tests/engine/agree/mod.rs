@@ -1,5 +1,6 @@
 //! Two roads to one number: the engine against scripts in numpy and scipy, and against itself by another way.
 
+mod libraries;
 mod reference;
 mod transition;
 

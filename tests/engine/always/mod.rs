@@ -1,5 +1,6 @@
-//! Properties that hold for any input: of confidence levels, of readings, and of the shapes that charts draw.
+//! Properties that hold for any input: of confidence levels, of paths, of readings, and of the shapes that charts draw.
 
 mod confidence;
+mod paths;
 mod readings;
 mod shapes;
