@@ -26,7 +26,7 @@ const KEPT_OUT_OF_ENGINE: [&str; 17] = [
 const THREAD_STARTERS: [&str; 5] =
     ["thread::spawn", "thread::Builder", "thread::scope", "rayon::spawn", "ThreadPoolBuilder"];
 const COLOUR_NAMES: [&str; 3] = ["Color32::", "Rgba::", "hex_color!"];
-const LIBRARIES_OF_ENGINE: [&str; 9] = ["csv", "faer", "jiff", "pulp", "rand", "rayon", "serde", "thiserror"];
+const LIBRARIES_OF_ENGINE: [&str; 8] = ["csv", "faer", "jiff", "pulp", "rand", "rayon", "serde", "thiserror"];
 
 /// Rule 1: the engine's manifest names only libraries of numbers, dates and text.
 pub(super) fn foreign_libraries_of_engine(manifest: &str) -> Vec<String> {
