@@ -27,9 +27,10 @@ impl Sheet {
     }
 }
 
-/// Every figure of a reading, one row each: `measure, confidence, value, low, high, standard_error`.
-pub fn reading_csv(reading: &Reading) -> String {
+/// Every figure of the reading at a day, one row each: `measure, confidence, value, low, high, standard_error`.
+pub fn reading_csv(day: u32, reading: &Reading) -> String {
     let mut rows = ReadingRows::new();
+    rows.error("horizon_days", None, Some(f64::from(day)), None);
     for row in &reading.loss {
         rows.range("var", row.confidence, [Some(row.var), row.var_low, row.var_high]);
         rows.range("es", row.confidence, [Some(row.es), row.es_low, row.es_high]);

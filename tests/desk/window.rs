@@ -2,6 +2,7 @@
 
 use crate::hand::Hand;
 use crate::support::{Folder, session};
+use ebbmark::desk::commands::{Command, ExportKind};
 use ebbmark::desk::session::RunState;
 use ebbmark::desk::start::session_of;
 use ebbmark::workspace::{Tab, Theme};
@@ -103,6 +104,50 @@ fn click_what_is_saved_is_opened_again_as_it_was() {
     again.until("the workspace", |session| session.file().is_some());
     assert_eq!(again.volatility(), 0.44);
     assert_eq!((again.session().view().theme, again.session().view().tab), (Theme::Dark, Tab::Correlation));
+}
+
+#[test]
+fn click_the_reading_is_exported_as_it_is_shown() {
+    let folder = Folder::new();
+    let path = folder.file("reading.csv");
+    let mut hand = Hand::on(session());
+    hand.drag("Reading line", vec2(120.0, 0.0));
+    hand.click("Export…");
+    hand.click("Reading as CSV…");
+    hand.until("the path field", |session| session.path_field().is_some());
+    hand.enter(&path.display().to_string());
+    hand.until("the file", |_| path.exists());
+    let at_line = hand.session().live().at_line.clone().unwrap();
+    let text = std::fs::read_to_string(&path).unwrap();
+    assert!(text.contains(&format!("horizon_days,,{},", hand.session().reading_day())), "{text}");
+    assert!(text.contains(&format!("var,0.99,{},", at_line.reading.loss[1].var)), "{text}");
+}
+
+#[test]
+fn click_every_kind_of_export_is_written_or_told() {
+    let folder = Folder::new();
+    let mut hand = Hand::on(session());
+    for (number, kind) in ExportKind::ALL.into_iter().enumerate() {
+        let path = folder.file(&format!("{number}.{}", kind.extension()));
+        hand.0.state_mut().push(Command::Export(kind, path.clone()));
+        hand.until("the file", |_| path.exists());
+        let bytes = std::fs::read(&path).unwrap();
+        let is_as_named = match kind {
+            ExportKind::Svg(_) => bytes.starts_with(b"<svg"),
+            ExportKind::Png(_) => png_size(&bytes) == [1920, 1080],
+            ExportKind::LargePng(_) => png_size(&bytes) == [3840, 2160],
+            ExportKind::Numbers(_) | ExportKind::Reading => bytes.contains(&b','),
+        };
+        assert!(is_as_named, "{kind:?}");
+    }
+    let nowhere = folder.file("no/such/folder.svg");
+    hand.0.state_mut().push(Command::Export(ExportKind::ALL[0], nowhere));
+    hand.until("the notice", |session| session.notices().all().iter().any(|note| note.is_failure));
+}
+
+/// Width and height in a PNG's first chunk.
+fn png_size(bytes: &[u8]) -> [u32; 2] {
+    [16, 20].map(|at| u32::from_be_bytes(bytes[at..at + 4].try_into().unwrap()))
 }
 
 #[test]

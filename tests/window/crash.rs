@@ -44,16 +44,12 @@ fn edit_and_crash(program: &Path, folder: &Path, state: &Path) -> Outcome<()> {
 /// Opens a book by typing its path.
 pub(crate) fn open_book(window: &Window, book: &Path) -> Outcome<()> {
     window.key("ctrl+shift+o")?;
-    window.type_text(&book.display().to_string())?;
-    window.key("Return")?;
+    window.enter_path(book)?;
     window.wait_for_title("slipway - Ebbmark")
 }
 
 fn save(window: &Window, path: &Path) -> Outcome<String> {
     window.key("ctrl+shift+s")?;
-    std::thread::sleep(Duration::from_secs(1));
-    window.key("ctrl+a")?;
-    window.type_text(&path.display().to_string())?;
-    window.key("Return")?;
+    window.enter_path(path)?;
     wait_for_file(path)
 }

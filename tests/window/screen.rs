@@ -9,6 +9,8 @@ use std::time::Duration;
 const PAUSE: Duration = Duration::from_millis(300);
 /// Time for the first frames of a program, which are the slowest.
 const SETTLING: Duration = Duration::from_secs(1);
+/// Time in which a path field comes up, where there is no file dialog.
+const UNTIL_FIELD: Duration = Duration::from_millis(1_500);
 const MOVES_OF_A_DRAG: i32 = 20;
 
 /// The program in its window; it is killed when dropped.
@@ -26,7 +28,11 @@ fn xdotool(arguments: &[&str]) -> Outcome<String> {
 impl Window {
     /// Starts the program, its sessions kept in `state`, and waits for its window.
     pub(crate) fn open(program: &Path, state: &Path) -> Outcome<Self> {
-        let program = Command::new(program).env("EBBMARK_STATE", state).spawn()?;
+        let program = Command::new(program)
+            .env("EBBMARK_STATE", state)
+            // Without a desktop's services paths are typed, and no dialog waits for a hand.
+            .env("DBUS_SESSION_BUS_ADDRESS", "unix:path=/nonexistent")
+            .spawn()?;
         let mut window = Self { program, id: String::new() };
         window.id = wait_for("the window", || {
             let found = xdotool(&["search", "--onlyvisible", "--name", " Ebbmark$"]).ok()?;
@@ -80,6 +86,14 @@ impl Window {
         xdotool(&["type", "--clearmodifiers", "--delay", "20", text])?;
         std::thread::sleep(PAUSE);
         Ok(())
+    }
+
+    /// Types a path into the path field, once that had time to come up, and enters it.
+    pub(crate) fn enter_path(&self, path: &Path) -> Outcome<()> {
+        std::thread::sleep(UNTIL_FIELD);
+        self.key("ctrl+a")?;
+        self.type_text(&path.display().to_string())?;
+        self.key("Return")
     }
 
     /// Ends the program without a warning, as a crash does.

@@ -6,6 +6,7 @@ use super::{RunState, Session};
 use crate::desk::commands::{Command, ExportKind, PathPurpose, SettingChange, file_stem};
 use crate::desk::worker::{ExportRequest, LineRequest, Request};
 use crate::workspace::{BookOrder, Document, Kept, Settings, Tab, Theme, View, Workspace};
+use ebbmark_engine::tables::NoticeLevel;
 use std::path::PathBuf;
 use std::sync::Arc;
 
@@ -145,11 +146,19 @@ impl Session {
         vec![Request::Save { path, workspace: Box::new(self.workspace()) }]
     }
 
-    /// Exports wait until the figures shown are those of all paths.
+    /// Exports wait until the figures shown are those of all paths; there are none of a book with faults.
     fn export(&mut self, kind: ExportKind, path: PathBuf) -> Vec<Request> {
         self.path_field = None;
+        if !self.faults.is_empty() {
+            self.notices.tell_failure("Not exported: the book has faults; mend them first");
+            return Vec::new();
+        }
         self.waiting_exports.push((kind, path));
-        self.due_exports()
+        let due = self.due_exports();
+        if due.is_empty() {
+            self.notices.tell(NoticeLevel::Info, "Exported when all paths are done");
+        }
+        due
     }
 
     /// Exports that need wait no longer.

@@ -26,7 +26,7 @@ pub(super) fn write(request: &ExportRequest) -> io::Result<()> {
         ExportKind::Numbers(ExportFigure::LossDistribution) => {
             csv::distribution_csv(subject.values, subject.loss_base()).into_bytes()
         }
-        ExportKind::Reading => csv::reading_csv(subject.reading).into_bytes(),
+        ExportKind::Reading => csv::reading_csv(request.at_line.day, subject.reading).into_bytes(),
     };
     write_whole(&request.path, &bytes)
 }
