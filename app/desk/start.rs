@@ -4,6 +4,7 @@ use super::app::App;
 use super::notices::Refusal;
 use super::session::Session;
 use super::window_error::WindowError;
+use super::worker::files::whole_path;
 use super::worker::open::{open as open_files, opened_book};
 use super::worker::{Dialogs, Opened, Worker};
 use crate::opening;
@@ -80,11 +81,12 @@ pub fn session_of(files: &[PathBuf], kept: Option<Kept>) -> Session {
             if files.is_empty() {
                 return just_opened(example);
             }
-            match open_files(files, &example.document) {
+            let files: Vec<PathBuf> = files.iter().map(|file| whole_path(file)).collect();
+            match open_files(&files, &example.document) {
                 Ok(opened) => just_opened(opened),
                 Err(Faults(faults)) => {
                     let mut session = just_opened(example);
-                    session.refuse(Refusal { paths: files.to_vec(), faults });
+                    session.refuse(Refusal { paths: files, faults });
                     session
                 }
             }

@@ -8,7 +8,6 @@ use crate::workspace::{self, Document, Settings};
 use ebbmark_engine::measures::LossFrom;
 use ebbmark_engine::tables::{Faults, Notice};
 use std::path::{Path, PathBuf};
-use std::sync::Arc;
 
 /// A document, and what its readers want told.
 pub(super) type Source = (Document, Vec<Notice>);
@@ -44,10 +43,7 @@ fn from_workspace(path: &Path) -> Result<Source, Failure> {
 }
 
 fn from_opened(opened: Opened) -> Source {
-    let Opened { name, inputs, holidays, book_currency, as_of, notices } = opened;
-    let settings = Settings { book_currency, as_of, ..Settings::usual() };
-    let holidays = holidays.map(Arc::new);
-    (Document { name, inputs: Arc::new(inputs), holidays, settings }, notices)
+    Document::of_book(opened, &Settings::usual())
 }
 
 fn named_files(arguments: &SourceArguments) -> Vec<(FileKind, PathBuf)> {

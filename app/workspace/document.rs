@@ -1,8 +1,10 @@
 //! A book with everything that decides its figures. How it is looked at lives in `view`; nothing here is computed.
 
+use crate::opening::Opened;
 use ebbmark_engine::factors::{Inputs, ModelSettings};
 use ebbmark_engine::history::date_after;
 use ebbmark_engine::measures::{Confidence, Conventions, LossFrom};
+use ebbmark_engine::tables::Notice;
 use jiff::civil::Date;
 use std::sync::Arc;
 
@@ -60,6 +62,17 @@ impl Document {
     pub fn date_of(&self, day: u32) -> Option<Date> {
         let holidays = self.holidays.as_deref().map_or([].as_slice(), Vec::as_slice);
         date_after(self.settings.as_of?, day, holidays)
+    }
+}
+
+impl Document {
+    /// A book as it was opened, and what its readers want told. It has a currency, a date, capital and limit of its own;
+    /// how it is read is taken over from `before`.
+    pub fn of_book(book: Opened, before: &Settings) -> (Self, Vec<Notice>) {
+        let Opened { name, inputs, holidays, book_currency, as_of, notices } = book;
+        let settings = Settings { book_currency, as_of, capital: None, loss_limit: None, ..before.clone() };
+        let holidays = holidays.map(Arc::new);
+        (Self { name, inputs: Arc::new(inputs), holidays, settings }, notices)
     }
 }
 

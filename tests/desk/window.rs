@@ -8,6 +8,8 @@ use ebbmark::desk::start::session_of;
 use ebbmark::workspace::{Tab, Theme};
 use egui::{Key, Modifiers, vec2};
 use egui_kittest::kittest::Queryable;
+use std::path::{Path, PathBuf};
+use std::sync::Arc;
 
 #[test]
 fn click_the_window_opens_with_the_example_and_its_reading() {
@@ -68,6 +70,34 @@ fn click_a_book_is_opened_by_its_path() {
     hand.until("the book", |session| session.document().name == "mole");
     assert!(hand.session().document().inputs.correlation.is_some());
     assert_eq!(hand.session().path_field(), None);
+}
+
+/// A file that a hand lets go over the window.
+#[derive(Debug)]
+struct Dropped(PathBuf);
+
+impl egui::DroppedFile for Dropped {
+    fn path(&self) -> &Path {
+        &self.0
+    }
+
+    fn bytes(&self) -> Result<Vec<u8>, String> {
+        std::fs::read(&self.0).map_err(|error| error.to_string())
+    }
+}
+
+#[test]
+fn click_files_dropped_together_open_as_one_book() {
+    let folder = Folder::new();
+    let book = folder.write("mole.csv", "name,quantity,price,volatility\nMole,50,40,25%\nQuay,5,10,0.3\n");
+    let correlation = folder.write("c.csv", "factor,Mole,Quay\nMole,1,0.5\nQuay,0.5,1\n");
+    let mut hand = Hand::on(session());
+    for file in [correlation, book] {
+        hand.0.input_mut().dropped_files.push(Arc::new(Dropped(file)));
+    }
+    hand.until("the book", |session| session.document().name == "mole");
+    assert!(hand.session().document().inputs.correlation.is_some());
+    hand.until("its figures", |session| session.live().state == RunState::Finished);
 }
 
 #[test]

@@ -4,11 +4,13 @@ use crate::support::{Driven, Folder, document, session};
 use ebbmark::desk::commands::{Command, Parameter, SettingChange};
 use ebbmark::desk::session::{RunState, Session};
 use ebbmark::desk::worker::assemble::kept_days;
+use ebbmark::desk::worker::files::whole_path;
 use ebbmark::desk::worker::{Answer, Figures};
 use ebbmark_engine::book::DiffusionKind;
 use ebbmark_engine::factors::Model;
 use ebbmark_engine::measures::{Reading, reading};
 use ebbmark_engine::simulate::{Plan, Unwatched, run};
+use std::path::{Path, PathBuf};
 
 fn is_settled(session: &Session) -> bool {
     let live = session.live();
@@ -163,10 +165,20 @@ fn always_kept_days_keep_to_the_budget() {
     }
 }
 
+#[test]
+fn always_paths_are_kept_from_the_root_on() {
+    assert!(whole_path(Path::new("book.ron")).is_absolute());
+    let home = std::env::var("HOME").unwrap_or_default();
+    if !home.is_empty() {
+        assert_eq!(whole_path(Path::new("~/a/b.csv")), Path::new(&home).join("a/b.csv"));
+    }
+    assert_eq!(whole_path(Path::new("/a/~b.csv")), Path::new("/a/~b.csv"));
+}
+
 const POSITIONS: &str = "name,quantity,price,volatility\nQuay,100,20,0.3\nMole,50,40,25%\n";
 const CORRELATION: &str = "factor,Quay,Mole\nQuay,1,0.4\nMole,0.4,1\n";
 
-fn open(driven: &mut Driven, paths: Vec<std::path::PathBuf>) {
+fn open(driven: &mut Driven, paths: Vec<PathBuf>) {
     driven.apply(Command::Open(paths));
 }
 

@@ -12,7 +12,7 @@ mod dialog;
 /// Figures and numbers into files.
 mod export;
 /// Opening, saving, exporting.
-mod files;
+pub mod files;
 /// The session against a crash.
 mod keep;
 /// Files into a document.

@@ -65,22 +65,10 @@ fn check(document: &Document) -> Result<(), Faults> {
     if document.settings.book_currency.is_none() && named.any(is_valid_in) { Ok(()) } else { Err(faults) }
 }
 
-/// A book with settings of its own; how it is read is taken over from what was open before.
+/// A book of its own, without a workspace.
 pub fn opened_book(book: opening::Opened, before: &Settings) -> Opened {
-    let settings = Settings {
-        book_currency: book.book_currency,
-        as_of: book.as_of,
-        capital: None,
-        loss_limit: None,
-        ..before.clone()
-    };
-    let document = Document {
-        name: book.name,
-        inputs: Arc::new(book.inputs),
-        holidays: book.holidays.map(Arc::new),
-        settings,
-    };
-    Opened { document, view: None, file: None, notices: book.notices }
+    let (document, notices) = Document::of_book(book, before);
+    Opened { document, view: None, file: None, notices }
 }
 
 /// The current book with the parts that were opened in place of its own.
