@@ -8,6 +8,7 @@ use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
 use ebbmark_engine::tables::Fault;
 use egui::{Align2, Area, Frame, Grid, Id, Key, Label, Modal, Order, ScrollArea, Stroke, TextEdit, Ui, vec2};
+use std::collections::BTreeSet;
 use std::path::PathBuf;
 
 /// Width of the overlays.
@@ -158,41 +159,75 @@ pub fn faults_ui(ui: &mut Ui, faults: &[Fault]) {
     });
 }
 
+/// Most faults listed above the view; the rows of the book show their own.
+const MOST_LISTED: usize = 6;
+
 /// The inputs as they stand can't be read: why, and, where it is the currency, the question that settles it.
 pub fn invalid_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let faults = session.faults();
+    let (currency, others): (Vec<&Fault>, Vec<&Fault>) =
+        session.faults().iter().partition(|fault| asks_for_currency(fault));
     let palette = Palette::of(ui);
-    Frame::new().stroke(Stroke::new(1.0, palette.loss)).inner_margin(8.0).corner_radius(6.0).show(ui, |ui| {
+    let edge = Frame::new().stroke(Stroke::new(1.0, palette.loss)).inner_margin(8.0).corner_radius(6.0);
+    edge.show(ui, |ui| {
         ui.set_width(ui.available_width());
-        let what = if session.live().is_before_edit {
-            "figures below are from before the edit"
-        } else {
-            "nothing can be read yet"
-        };
-        ui.label(theme::strong(format!("\u{26a0} The book has to be mended; {what}")).color(palette.loss));
-        for fault in faults.iter().take(6) {
-            ui.add(Label::new(fault.to_string()).wrap());
+        if !others.is_empty() {
+            faulty_ui(ui, session, queue, &others);
         }
-        if faults.len() > 6 {
-            ui.label(theme::soft(ui, format!("and {} more", faults.len() - 6)));
+        if !currency.is_empty() {
+            currency_ui(ui, session, queue);
         }
-        ui.horizontal(|ui| {
-            if faults.iter().any(asks_for_currency) {
-                ui.label("Currency of the book");
-                let field = CommittedText { name: "Book currency asked for", hint: "EUR", width: 60.0 };
-                if let Some(code) = field.ui(ui, "").1 {
-                    queue.push(Command::ChangeSetting(SettingChange::BookCurrency(Some(code))));
-                }
+    });
+    ui.add_space(4.0);
+}
+
+fn faulty_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, faults: &[&Fault]) {
+    let figures = if session.live().is_before_edit {
+        "the figures are from before the edit"
+    } else {
+        "nothing can be read yet"
+    };
+    let title = theme::strong(format!("\u{26a0} The book has to be mended; {figures}"));
+    ui.label(title.color(Palette::of(ui).loss));
+    for fault in faults.iter().take(MOST_LISTED) {
+        ui.add(Label::new(fault.to_string()).wrap());
+    }
+    ui.horizontal(|ui| {
+        if faults.len() > MOST_LISTED {
+            ui.label(theme::soft(ui, format!("and {} more", faults.len() - MOST_LISTED)));
+        }
+        if session.undo_text().is_some() && ui.button("Undo the edit").clicked() {
+            queue.push(Command::Undo);
+        }
+    });
+}
+
+/// Which currency the book is in: one of those its rows name, or another.
+fn currency_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    ui.label(theme::strong("Which currency is the book in?"));
+    ui.label(theme::soft(
+        ui,
+        "Its rows name more than one, or leave some empty; everything is read in the book's own",
+    ));
+    let holdings = &session.document().inputs.holdings;
+    let named: BTreeSet<&String> = holdings.iter().filter_map(|holding| holding.currency.as_ref()).collect();
+    let mut settle = |code: String| {
+        queue.push(Command::ChangeSetting(SettingChange::BookCurrency(Some(code))));
+    };
+    ui.horizontal_wrapped(|ui| {
+        for code in named {
+            if ui.button(code).clicked() {
+                settle(code.clone());
             }
-            if session.undo_text().is_some() && ui.button("Undo the edit").clicked() {
-                queue.push(Command::Undo);
-            }
-        });
+        }
+        let field = CommittedText { name: "Book currency asked for", hint: "another", width: 60.0 };
+        if let Some(code) = field.ui(ui, "").1 {
+            settle(code);
+        }
     });
 }
 
 fn asks_for_currency(fault: &Fault) -> bool {
-    fault.expected.contains("--book-currency") || fault.expected.contains("book's currency")
+    fault.expected.contains("--book-currency")
 }
 
 /// While files hover over the window: what dropping them does.

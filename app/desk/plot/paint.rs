@@ -16,7 +16,7 @@ pub fn panel(painter: &Painter, frame: &Frame, palette: &Palette, panel: &Panel,
     axes::left(painter, frame, palette, &panel.up.ticks, panel.up.has_words);
     axes::right(painter, frame, palette, &panel.beside, beside_width);
     if !panel.across.name.is_empty() {
-        let at = pos2(frame.rect.right() + 10.0, frame.rect.bottom() + 5.0);
+        let at = pos2(frame.rect.right() + 20.0, frame.rect.bottom() + 5.0);
         painter.text(at, Align2::LEFT_TOP, &panel.across.name, axes::font(), palette.soft_ink);
     }
     let inside = painter.with_clip_rect(frame.rect.intersect(painter.clip_rect()));

@@ -50,13 +50,11 @@ impl<'a> Money<'a> {
         Some(percent(money / base, percent_decimals(money / base, error_money / base)))
     }
 
-    /// "4.59 – 4.67"; an end that the sample can't give is said to be missing.
+    /// "4.59–4.67"; an end that the sample can't give is said to be missing.
     pub fn range(&self, low: Option<f64>, high: Option<f64>, error_money: f64) -> Option<String> {
         let figure = |money: f64| self.figure(money, error_money);
         match (low, high) {
-            (Some(low), Some(high)) if low >= 0.0 => {
-                Some(format!("{} \u{2013} {}", figure(low), figure(high)))
-            }
+            (Some(low), Some(high)) if low >= 0.0 => Some(format!("{}\u{2013}{}", figure(low), figure(high))),
             (Some(low), Some(high)) => Some(format!("{} to {}", figure(low), figure(high))),
             (Some(low), None) => Some(format!("{} to no upper end", figure(low))),
             (None, Some(high)) => Some(format!("no lower end to {}", figure(high))),
@@ -66,7 +64,7 @@ impl<'a> Money<'a> {
 
     /// Digits of an amount: as its error allows, or three significant ones where it has none.
     fn decimals(&self, money: f64, error_money: f64) -> usize {
-        let error = if error_money > 0.0 { error_money } else { money.abs() / 200.0 };
+        let error = if error_money > 0.0 { error_money } else { money.abs() / 100.0 };
         self.scale.decimals(error).min(if self.scale.size > 1.0 { 4 } else { 2 })
     }
 }
@@ -94,6 +92,6 @@ pub fn row_at(rows: &[LossRow], confidence: f64) -> Option<&LossRow> {
 }
 
 fn percent_decimals(fraction: f64, error: f64) -> usize {
-    let error = if error > 0.0 { error } else { fraction.abs() / 200.0 };
+    let error = if error > 0.0 { error } else { fraction.abs() / 100.0 };
     decimals_for(error * 100.0).clamp(1, 2)
 }

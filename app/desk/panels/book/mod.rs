@@ -10,7 +10,7 @@ use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
 use crate::workspace::BookColumn;
 use ebbmark_engine::book::{Description, DiffusionKind, Holding, Kind, LevelUnit, TypedFigure};
-use egui::{Align, Button, Label, Layout, Response, Role, Sense, Ui, WidgetInfo};
+use egui::{Align, Button, Label, Layout, Response, Role, Sense, Ui, WidgetInfo, vec2};
 use egui_extras::{Column, TableBody, TableBuilder};
 use lines::{BookLine, HoldingLine, book_lines};
 
@@ -18,8 +18,6 @@ use lines::{BookLine, HoldingLine, book_lines};
 const HOLDING_POINTS: f32 = 38.0;
 /// Height of a group's line.
 const GROUP_POINTS: f32 = 24.0;
-/// Width of the column that holds worth and diffusion.
-const WORTH_POINTS: f32 = 158.0;
 
 /// Draws heading, filter and list.
 pub fn book_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
@@ -36,11 +34,10 @@ pub fn book_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         .auto_shrink(false)
         .cell_layout(Layout::left_to_right(Align::Center))
         .column(Column::remainder().clip(true))
-        .column(Column::exact(WORTH_POINTS).clip(true))
         .header(22.0, |mut header| {
-            header.col(|ui| sort_ui(ui, session, queue, "Holding", BookColumn::Holding));
             header.col(|ui| {
-                ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
+                sort_ui(ui, session, queue, "Holding", BookColumn::Holding);
+                right(ui, |ui| {
                     sort_ui(ui, session, queue, "Diffusion", BookColumn::Diffusion);
                     sort_ui(ui, session, queue, "Value", BookColumn::Value);
                 });
@@ -117,27 +114,27 @@ fn lines_ui(body: TableBody<'_>, session: &Session, queue: &mut Queue, lines: &[
     });
     body.heterogeneous_rows(heights, |mut row| match &lines[row.index()] {
         BookLine::Group { name, depth, value } => {
-            row.col(|ui| {
-                ui.add_space(*depth as f32 * 10.0);
-                ui.add(Label::new(theme::strong(name).size(theme::SMALL_POINTS + 1.0)).truncate());
-            });
-            row.col(|ui| {
-                right(ui, |ui| {
-                    let text = if *value == 0.0 { String::new() } else { shown_figure(value.round()) };
-                    ui.label(
-                        theme::strong(text).size(theme::SMALL_POINTS + 1.0).color(Palette::of(ui).soft_ink),
-                    );
-                });
-            });
+            row.col(|ui| group_ui(ui, name, *depth, *value));
         }
         BookLine::Holding(line) => {
             let Some(holding) = session.document().inputs.holdings.get(line.row) else { return };
             let is_chosen = session.view().holding.as_ref() == Some(&holding.name);
             row.set_selected(is_chosen);
-            row.col(|ui| held_ui(ui, queue, line.row, holding));
-            row.col(|ui| worth_ui(ui, line));
+            row.col(|ui| holding_ui(ui, queue, line, holding));
             hear_row(row.response(), queue, holding, line, is_chosen);
         }
+    });
+}
+
+fn group_ui(ui: &mut Ui, name: &str, depth: usize, value: f64) {
+    let text = |text: String| theme::strong(text).size(theme::SMALL_POINTS + 1.0);
+    right(ui, |ui| {
+        let subtotal = if value == 0.0 { String::new() } else { shown_figure(value.round()) };
+        ui.label(text(subtotal).color(Palette::of(ui).soft_ink));
+        ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
+            ui.add_space(depth as f32 * 10.0);
+            ui.add(Label::new(text(name.to_owned())).truncate());
+        });
     });
 }
 
@@ -145,24 +142,45 @@ fn right(ui: &mut Ui, add: impl FnOnce(&mut Ui)) {
     ui.with_layout(Layout::right_to_left(Align::Center), add);
 }
 
-/// Name, and under it quantity and price, edited in place.
-fn held_ui(ui: &mut Ui, queue: &mut Queue, row: usize, holding: &Holding) {
+/// Name and worth; under them quantity and price, edited in place, and the diffusion or what is wrong.
+fn holding_ui(ui: &mut Ui, queue: &mut Queue, line: &HoldingLine, holding: &Holding) {
+    let half = vec2(ui.available_width(), 17.0);
     ui.vertical(|ui| {
-        ui.add_space(3.0);
-        ui.add(Label::new(&holding.name).truncate());
-        ui.horizontal(|ui| {
-            ui.spacing_mut().item_spacing.x = 2.0;
-            ui.spacing_mut().interact_size.y = 16.0;
-            ui.style_mut().drag_value_text_style = egui::TextStyle::Small;
-            ui.style_mut().override_text_style = Some(egui::TextStyle::Small);
-            for (change, word) in fields(holding) {
-                if let Some(word) = word {
-                    ui.label(theme::soft(ui, word));
-                }
-                field_ui(ui, queue, row, &holding.name, change, holding);
-            }
+        ui.add_space(2.0);
+        ui.allocate_ui_with_layout(half, Layout::right_to_left(Align::Center), |ui| {
+            ui.label(&line.worth);
+            ui.with_layout(Layout::left_to_right(Align::Center), |ui| {
+                ui.add(Label::new(&holding.name).truncate());
+            });
+        });
+        ui.allocate_ui_with_layout(half, Layout::left_to_right(Align::Center), |ui| {
+            ui.scope(|ui| held_ui(ui, queue, line.row, holding));
+            right(ui, |ui| driven_ui(ui, line));
         });
     });
+}
+
+/// Quantity and price.
+fn held_ui(ui: &mut Ui, queue: &mut Queue, row: usize, holding: &Holding) {
+    ui.spacing_mut().item_spacing.x = 2.0;
+    ui.spacing_mut().interact_size.y = 16.0;
+    ui.style_mut().drag_value_text_style = egui::TextStyle::Small;
+    ui.style_mut().override_text_style = Some(egui::TextStyle::Small);
+    for (change, word) in fields(holding) {
+        if let Some(word) = word {
+            ui.label(theme::soft(ui, word));
+        }
+        field_ui(ui, queue, row, &holding.name, change, holding);
+    }
+}
+
+/// The diffusion, or what is wrong.
+fn driven_ui(ui: &mut Ui, line: &HoldingLine) {
+    let text = match line.faults.first() {
+        Some(fault) => theme::soft(ui, format!("\u{26a0} {fault}")).color(Palette::of(ui).loss),
+        None => theme::soft(ui, &line.diffusion),
+    };
+    ui.add(Label::new(text).truncate());
 }
 
 /// The figures of a holding that its line shows, each with the word before it.
@@ -215,24 +233,6 @@ fn price_decimals(holding: &Holding) -> usize {
         (Kind::Spot, _) | (Kind::Level, LevelUnit::Percent) => 2,
         _ => 0,
     }
-}
-
-/// Worth, and under it the diffusion or what is wrong.
-fn worth_ui(ui: &mut Ui, line: &HoldingLine) {
-    ui.with_layout(Layout::top_down(Align::Max), |ui| {
-        ui.add_space(3.0);
-        ui.label(&line.worth);
-        match line.faults.first() {
-            Some(fault) => {
-                let text = theme::soft(ui, format!("\u{26a0} {fault}")).color(Palette::of(ui).loss);
-                ui.add(Label::new(text).truncate());
-            }
-            None => {
-                let text = theme::soft(ui, &line.diffusion);
-                ui.add(Label::new(text).truncate());
-            }
-        }
-    });
 }
 
 fn hear_row(response: Response, queue: &mut Queue, holding: &Holding, line: &HoldingLine, is_chosen: bool) {

@@ -7,11 +7,12 @@ use crate::desk::commands::Queue;
 use crate::desk::inputs::read_figure;
 use crate::desk::plot::axes;
 use crate::desk::theme::{self, Palette};
+use ebbmark_engine::figures::grouped;
 use egui::epaint::{Mesh, TextShape};
 use egui::text::{LayoutJob, TextWrapping};
 use egui::{
     Align2, Event, EventFilter, FontFamily, FontId, Id, Key, Label, Modifiers, Painter, Pos2, Rect, Response,
-    Role, ScrollArea, Sense, Shape, Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, vec2,
+    Role, ScrollArea, Sense, Shape, Stroke, StrokeKind, TextEdit, Ui, WidgetInfo, pos2, vec2,
 };
 
 /// Smallest square that holds a number.
@@ -127,7 +128,6 @@ fn paint(ui: &Ui, matrix: &Matrix<'_>, grid: &Grid, chosen: (usize, usize), poin
     if grid.square >= NUMBER_POINTS {
         numbers(ui, painter, palette, matrix, grid);
     }
-    names(painter, palette, matrix, grid, chosen, pointed);
     let outline = |(row, column): (usize, usize), width: f32| {
         painter.rect_stroke(
             grid.cell(row, column),
@@ -139,6 +139,7 @@ fn paint(ui: &Ui, matrix: &Matrix<'_>, grid: &Grid, chosen: (usize, usize), poin
     pointed.into_iter().for_each(|cell| outline(cell, 1.0));
     outline(chosen, 2.0);
     outline((chosen.1, chosen.0), 1.0);
+    names(painter, palette, matrix, grid, chosen, pointed);
 }
 
 /// "0.45" in every square that is seen.
@@ -150,13 +151,14 @@ fn numbers(ui: &Ui, painter: &Painter, palette: &Palette, matrix: &Matrix<'_>, g
             if ui.is_rect_visible(cell) {
                 let value = matrix.at(row, column);
                 let ink = palette.on_correlation(value);
-                painter.text(cell.center(), Align2::CENTER_CENTER, format!("{value:.2}"), font.clone(), ink);
+                painter.text(cell.center(), Align2::CENTER_CENTER, grouped(value, 2), font.clone(), ink);
             }
         }
     }
 }
 
-/// Names of all rows and columns where squares are large enough, else of the chosen and the pointed ones.
+/// Names of all rows and columns where squares are large enough, else of the chosen and the pointed ones. They stay in
+/// sight when the map is scrolled.
 fn names(
     painter: &Painter,
     palette: &Palette,
@@ -166,16 +168,26 @@ fn names(
     pointed: Option<(usize, usize)>,
 ) {
     let marked = pointed.unwrap_or(chosen);
+    let whole = Rect::from_min_max(grid.origin - vec2(NAMES_POINTS, NAMES_POINTS), grid.rect().max);
+    let seen = whole.intersect(painter.clip_rect());
+    let left = grid.origin.x.max(seen.left() + NAMES_POINTS);
+    let top = grid.origin.y.max(seen.top() + NAMES_POINTS);
+    let ground = |from: Pos2, to: Pos2| painter.rect_filled(Rect::from_min_max(from, to), 0.0, palette.panel);
+    ground(pos2(seen.left(), seen.top()), pos2(seen.right(), top));
+    for place in 0..grid.size {
+        let is_marked = place == marked.1;
+        if grid.square >= NAMED_POINTS || is_marked {
+            let end = pos2(grid.cell(0, place).center().x, top - 6.0);
+            name(painter, palette, matrix.names[place], is_marked, end, -std::f32::consts::FRAC_PI_2);
+        }
+    }
+    ground(pos2(seen.left(), seen.top()), pos2(left, seen.bottom()));
+    let beside = painter.with_clip_rect(Rect::from_min_max(pos2(seen.left(), top), seen.max));
     for place in 0..grid.size {
         let is_marked = place == marked.0;
         if grid.square >= NAMED_POINTS || is_marked {
-            let center = grid.cell(place, 0).left_center() - vec2(6.0, 0.0);
-            name(painter, palette, matrix.names[place], is_marked, center, 0.0);
-        }
-        let is_marked = place == marked.1;
-        if grid.square >= NAMED_POINTS || is_marked {
-            let center = grid.cell(0, place).center_top() - vec2(0.0, 6.0);
-            name(painter, palette, matrix.names[place], is_marked, center, -std::f32::consts::FRAC_PI_2);
+            let end = pos2(left - 6.0, grid.cell(place, 0).center().y);
+            name(&beside, palette, matrix.names[place], is_marked, end, 0.0);
         }
     }
 }

@@ -24,7 +24,7 @@ pub fn ahead_ui(ui: &mut Ui, session: &Session, model: &Model, factor: &RiskFact
     if ui.available_height() < LEAST_HEIGHT + BELOW_POINTS {
         return;
     }
-    ui.label(theme::soft(ui, "By itself: mean, half and 90 % of outcomes on each day"));
+    ui.label(theme::soft(ui, "Ahead by itself: mean, 50 and 90 % bands"));
     let horizon = session.document().settings.horizon_days;
     let ahead = worked_out(ui, factor, model.days_per_year, horizon);
     let size = ui.available_size();

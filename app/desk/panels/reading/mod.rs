@@ -140,7 +140,7 @@ fn drawdown_ui(ui: &mut Ui, session: &Session, money: &Money<'_>, at_line: &AtLi
     let row = drawdown.quantiles.iter().find(|row| (row.confidence - chosen).abs() < 1e-12);
     if let Some(row) = row {
         let worst = Amount { money: row.mean_beyond, error: row.mean_beyond_error };
-        amount_ui(ui, money, &format!("Mean of worst {}", percent_words(1.0 - chosen)), &worst);
+        amount_ui(ui, money, &format!("Worst {}, mean", percent_words(1.0 - chosen)), &worst);
     }
 }
 
@@ -223,14 +223,14 @@ fn check_ui(ui: &mut Ui, money: &Money<'_>, reading: &Reading) {
         ui.label(theme::soft(ui, ["", "exact", "sampled", "z"][column]));
     });
     moment_ui(ui, "Expected value", &moments.mean, |value, error| money.figure(value, error));
-    moment_ui(ui, "Standard deviation", &moments.sd, |value, error| money.figure(value, error));
+    moment_ui(ui, "Std. deviation", &moments.sd, |value, error| money.figure(value, error));
     moment_ui(ui, "Skewness", &moments.skewness, |value, error| {
         grouped(value, decimals_for(if error > 0.0 { error } else { 0.001 }))
     });
 }
 
 fn moment_row_ui(ui: &mut Ui, cell: impl FnMut(&mut Ui, usize)) {
-    row_ui(ui, &widths(ui, [62.0, 62.0, 42.0]), 18.0, cell);
+    row_ui(ui, &widths(ui, [56.0, 58.0, 36.0]), 18.0, cell);
 }
 
 fn moment_ui(ui: &mut Ui, label: &str, row: &MomentRow, words: impl Fn(f64, f64) -> String) {

@@ -70,13 +70,13 @@ fn loss_from_ui(ui: &mut Ui, chosen: LossFrom, queue: &mut Queue) {
 pub fn limit_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, money: &Money<'_>) {
     let settings = &session.document().settings;
     let currency = money.currency.unwrap_or("");
-    field_row_ui(ui, &with_unit("Loss from today's value", currency), |ui| {
+    field_row_ui(ui, &with_unit("Loss limit", currency), |ui| {
         let field = CommittedText { name: "Loss limit", hint: "none", width: FIELD_POINTS };
         if let Some(limit) = optional_figure_ui(ui, field, settings.loss_limit) {
             set(queue, SettingChange::LossLimit(limit));
         }
     });
-    field_row_ui(ui, &with_unit("Capital, base of every %", currency), |ui| {
+    field_row_ui(ui, &with_unit("Capital", currency), |ui| {
         let field = CommittedText { name: "Capital", hint: "today's value", width: FIELD_POINTS };
         if let Some(capital) = optional_figure_ui(ui, field, settings.capital) {
             set(queue, SettingChange::Capital(capital));
