@@ -205,7 +205,7 @@ struct Group {
     name: String,
     value: f64,
     lines: Vec<HoldingLine>,
-    groups: Vec<Group>,
+    groups: Vec<Self>,
 }
 
 impl Group {
