@@ -5,6 +5,7 @@
 mod agree;
 mod always;
 mod exact;
+mod inputs;
 mod law;
 mod support;
 mod table;

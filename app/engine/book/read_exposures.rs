@@ -1,7 +1,7 @@
 //! From a table of exposures to sensitivities. Whether their holdings and factors exist is asked when the model is made.
 
 use super::{Exposure, Per};
-use crate::tables::{Cells, Columns, Fault, Faults, Notice, Table};
+use crate::tables::{Cells, Columns, Faults, Notice, Table};
 
 const COLUMNS: [&str; 4] = ["holding", "factor", "money", "per"];
 const MOVES: [(&str, Per); 3] =
@@ -13,7 +13,7 @@ const MOVES: [(&str, Per); 3] =
 /// Every bad cell of every row.
 pub fn read_exposures(table: &Table) -> Result<(Vec<Exposure>, Vec<Notice>), Faults> {
     let columns = Columns::find(table, &COLUMNS, &COLUMNS)?;
-    let mut faults: Vec<Fault> = Vec::new();
+    let mut faults = table.faults.clone();
     let mut exposures = Vec::new();
     for row in &table.rows {
         let mut cells = Cells::of(table, &columns, row, &mut faults);
@@ -27,7 +27,7 @@ pub fn read_exposures(table: &Table) -> Result<(Vec<Exposure>, Vec<Notice>), Fau
         }
     }
     let notices = columns.notice_of_unknown(table).into_iter().collect();
-    if faults.is_empty() { Ok((exposures, notices)) } else { Err(Faults(faults)) }
+    Faults::unless_any(faults, (exposures, notices))
 }
 
 /// The words of the page, and `+1,00` where a comma is the decimal sign.

@@ -37,7 +37,7 @@ const KINDS: [(&str, Option<Kind>); 6] = [
 pub fn read_positions(table: &Table) -> Result<(Vec<Holding>, Vec<Notice>), Faults> {
     let known = [COLUMNS.as_slice(), &DESCRIPTION_COLUMNS, &LATER_COLUMNS].concat();
     let columns = Columns::find(table, &known, &["name", "quantity"])?;
-    let mut faults: Vec<Fault> = Vec::new();
+    let mut faults = table.faults.clone();
     let mut notices: Vec<Notice> = columns.notice_of_unknown(table).into_iter().collect();
     let mut holdings: Vec<Holding> = Vec::new();
     let mut first_lines: HashMap<&str, usize> = HashMap::new();
@@ -58,11 +58,11 @@ pub fn read_positions(table: &Table) -> Result<(Vec<Holding>, Vec<Notice>), Faul
             holdings.push(Holding { other_columns, ..holding });
         }
     }
-    if table.rows.is_empty() {
+    if table.rows.is_empty() && faults.is_empty() {
         let place = table.place(None, None);
         faults.push(Fault { place, found: "no holding".to_owned(), expected: "at least one row".to_owned() });
     }
-    if faults.is_empty() { Ok((holdings, notices)) } else { Err(Faults(faults)) }
+    Faults::unless_any(faults, (holdings, notices))
 }
 
 fn read_row(cells: &mut Cells<'_, '_>) -> Option<Holding> {

@@ -14,7 +14,7 @@ const SYMMETRY: f64 = 1e-12;
 /// Every cell that is no number, lies outside [-1, 1], differs from its mirror or misses with it, a diagonal other than
 /// 1, a name given twice, and names that stand only in the header or only in the first column.
 pub fn read_correlation(table: &Table) -> Result<CorrelationTable, Faults> {
-    let mut reading = Reading { table, faults: Vec::new() };
+    let mut reading = Reading { table, faults: table.faults.clone() };
     reading.check_names();
     if !reading.faults.is_empty() {
         return Err(Faults(reading.faults));

@@ -2,7 +2,7 @@
 
 use super::FactorRow;
 use crate::book::description::{DESCRIPTION_COLUMNS, read_description, read_unit};
-use crate::tables::{Cells, Columns, Fault, Faults, Notice, Table};
+use crate::tables::{Cells, Columns, Faults, Notice, Table};
 
 /// Reads `factors.csv`.
 ///
@@ -11,7 +11,7 @@ use crate::tables::{Cells, Columns, Fault, Faults, Notice, Table};
 pub fn read_factors(table: &Table) -> Result<(Vec<FactorRow>, Vec<Notice>), Faults> {
     let known = [["factor", "level", "unit"].as_slice(), &DESCRIPTION_COLUMNS].concat();
     let columns = Columns::find(table, &known, &["factor"])?;
-    let mut faults: Vec<Fault> = Vec::new();
+    let mut faults = table.faults.clone();
     let mut factors = Vec::new();
     for row in &table.rows {
         let mut cells = Cells::of(table, &columns, row, &mut faults);
@@ -28,5 +28,5 @@ pub fn read_factors(table: &Table) -> Result<(Vec<FactorRow>, Vec<Notice>), Faul
         }));
     }
     let notices = columns.notice_of_unknown(table).into_iter().collect();
-    if faults.is_empty() { Ok((factors, notices)) } else { Err(Faults(faults)) }
+    Faults::unless_any(faults, (factors, notices))
 }

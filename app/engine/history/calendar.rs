@@ -1,7 +1,7 @@
 //! Trading days: weekdays that are no holidays. Which holidays there are is the caller's to say; nothing here knows a
 //! country or today's date.
 
-use crate::tables::{Cells, Columns, Fault, Faults, Notice, Table};
+use crate::tables::{Cells, Columns, Faults, Notice, Table};
 use jiff::ToSpan;
 use jiff::civil::{Date, Weekday};
 
@@ -11,7 +11,7 @@ use jiff::civil::{Date, Weekday};
 /// Every cell that is empty or no date.
 pub fn read_holidays(table: &Table) -> Result<(Vec<Date>, Vec<Notice>), Faults> {
     let columns = Columns::find(table, &["date"], &["date"])?;
-    let mut faults: Vec<Fault> = Vec::new();
+    let mut faults = table.faults.clone();
     let mut days = Vec::new();
     for row in &table.rows {
         let mut cells = Cells::of(table, &columns, row, &mut faults);
@@ -19,12 +19,9 @@ pub fn read_holidays(table: &Table) -> Result<(Vec<Date>, Vec<Notice>), Faults> 
             days.extend(cells.date("date"));
         }
     }
-    if !faults.is_empty() {
-        return Err(Faults(faults));
-    }
     days.sort_unstable();
     days.dedup();
-    Ok((days, columns.notice_of_unknown(table).into_iter().collect()))
+    Faults::unless_any(faults, (days, columns.notice_of_unknown(table).into_iter().collect()))
 }
 
 /// The date that lies `trading_days` after `from`; `from` itself where that is 0. `holidays` ascending. None beyond the

@@ -49,6 +49,17 @@ pub struct Notice {
     pub text: String,
 }
 
+impl Faults {
+    /// The answer of a reader: what it read, or everything that is wrong, in order of line.
+    ///
+    /// # Errors
+    /// The faults, where there are any.
+    pub fn unless_any<T>(mut faults: Vec<Fault>, answer: T) -> Result<T, Self> {
+        faults.sort_by_key(|fault| fault.place.line);
+        if faults.is_empty() { Ok(answer) } else { Err(Self(faults)) }
+    }
+}
+
 impl fmt::Display for Place {
     fn fmt(&self, out: &mut fmt::Formatter<'_>) -> fmt::Result {
         let line = self.line.map(|line| format!("line {line}"));

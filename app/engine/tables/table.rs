@@ -15,6 +15,8 @@ pub struct Table {
     pub rows: Vec<Row>,
     /// Line of the header.
     pub header_line: usize,
+    /// Rows that are longer or shorter than the header, for a reader to report beside its own faults.
+    pub faults: Vec<Fault>,
     has_decimal_comma: bool,
 }
 
@@ -32,7 +34,8 @@ impl Table {
     /// line has most of. With the other two a comma is a decimal one, provided no number in the file has a point.
     ///
     /// # Errors
-    /// An empty file, or every row with fewer or more cells than the header (empty cells at the end excepted).
+    /// An empty file, or one that is no delimited text. A row with fewer or more cells than the header (empty cells at
+    /// the end excepted) is among [`Table::faults`] instead of the rows.
     pub fn read(text: &str, label: &str) -> Result<Self, Faults> {
         let text = text.strip_prefix('\u{feff}').unwrap_or(text);
         let separator = separator(text);
@@ -53,12 +56,10 @@ impl Table {
                 faults.push(fault(label, Some(row.line), &found, &expected));
             }
         }
-        if !faults.is_empty() {
-            return Err(Faults(faults));
-        }
         let has_point = kept.iter().flat_map(|row| &row.cells).any(|cell| number::has_point(cell));
         let has_decimal_comma = separator != b',' && !has_point;
-        Ok(Self { label: label.to_owned(), header, rows: kept, header_line: first.line, has_decimal_comma })
+        let label = label.to_owned();
+        Ok(Self { label, header, rows: kept, header_line: first.line, faults, has_decimal_comma })
     }
 
     /// [`Table::read`] for bytes.
@@ -106,12 +107,12 @@ fn cut(text: &str, separator: u8, label: &str) -> Result<Vec<Row>, Faults> {
         .flexible(true)
         .delimiter(separator)
         .from_reader(text.as_bytes());
-    let mut rows = Vec::new();
-    let mut faults = Vec::new();
+    let (mut rows, mut faults) = (Vec::new(), Vec::new());
+    let mut lines = Lines { text: text.as_bytes(), at: 0, line: 1 };
     for record in reader.records() {
         match record {
             Ok(record) => {
-                let line = record.position().map_or(0, |position| position.line() as usize);
+                let line = lines.of(record.position().map_or(0, |position| position.byte() as usize));
                 let cells: Vec<String> = record.iter().map(|cell| cell.trim().to_owned()).collect();
                 if !(cells.len() == 1 && cells[0].is_empty()) {
                     rows.push(Row { line, cells });
@@ -121,6 +122,27 @@ fn cut(text: &str, separator: u8, label: &str) -> Result<Vec<Row>, Faults> {
         }
     }
     if faults.is_empty() { Ok(rows) } else { Err(Faults(faults)) }
+}
+
+/// Counts lines up to ever later places.
+struct Lines<'a> {
+    text: &'a [u8],
+    at: usize,
+    line: usize,
+}
+
+impl Lines<'_> {
+    /// Line of the record that begins at or after `place`: line ends before it, of the record before or of blank lines,
+    /// belong to none.
+    fn of(&mut self, place: usize) -> usize {
+        while let Some(byte) =
+            self.text.get(self.at).filter(|byte| self.at < place || matches!(byte, b'\r' | b'\n'))
+        {
+            self.line += usize::from(*byte == b'\n');
+            self.at += 1;
+        }
+        self.line
+    }
 }
 
 fn separator(text: &str) -> u8 {
