@@ -45,6 +45,7 @@ pub fn open(files: &[PathBuf]) -> Result<(), WindowError> {
 fn options() -> eframe::NativeOptions {
     eframe::NativeOptions {
         viewport: egui::ViewportBuilder::default()
+            .with_icon(icon())
             .with_app_id("ebbmark")
             .with_inner_size(FIRST_SIZE)
             .with_min_inner_size(SMALLEST_SIZE),
@@ -132,4 +133,12 @@ fn example() -> Opened {
         notices: Vec::new(),
     };
     opening::built_in_example().map_or_else(|_| empty(), |book| opened_book(book, &Settings::usual()))
+}
+
+/// The program's icon, drawn from its SVG; an empty one, which the window manager replaces, where it can't be.
+fn icon() -> egui::IconData {
+    let side = 128;
+    let (width, height) = (side, side);
+    let rgba = crate::export::pixels(include_str!("../../assets/icon.svg"), width, height);
+    rgba.map_or_else(|_| egui::IconData::default(), |rgba| egui::IconData { rgba, width, height })
 }

@@ -13,5 +13,5 @@ pub mod png;
 pub mod csv;
 
 pub use look::{Look, Tone};
-pub use png::png;
+pub use png::{pixels, png};
 pub use svg::svg;

@@ -12,14 +12,32 @@ use std::sync::Arc;
 /// # Errors
 /// A page too large for memory, or what the renderer refused.
 pub fn png(figure: &Figure, look: Look) -> io::Result<Vec<u8>> {
-    let mut fonts = Database::new();
-    fonts.load_font_data(fonts::REGULAR.to_vec());
-    fonts.load_font_data(fonts::SEMIBOLD.to_vec());
-    fonts.set_sans_serif_family(fonts::FAMILY);
-    let options = Options { fontdb: Arc::new(fonts), ..Options::default() };
-    let tree = Tree::from_str(&svg(figure, look), &options).map_err(io::Error::other)?;
-    let mut pixels = Pixmap::new(look.width, look.height)
-        .ok_or_else(|| io::Error::other(format!("no room for {} x {} pixels", look.width, look.height)))?;
+    render(&svg(figure, look), look.width, look.height)?.encode_png().map_err(io::Error::other)
+}
+
+/// An SVG of a given size as pixels: red, green, blue and opacity, a byte each, row by row.
+///
+/// # Errors
+/// As [`png`].
+pub fn pixels(svg: &str, width: u32, height: u32) -> io::Result<Vec<u8>> {
+    let pixels = render(svg, width, height)?;
+    Ok(pixels
+        .pixels()
+        .iter()
+        .map(|pixel| pixel.demultiply())
+        .flat_map(|p| [p.red(), p.green(), p.blue(), p.alpha()])
+        .collect())
+}
+
+fn render(svg: &str, width: u32, height: u32) -> io::Result<Pixmap> {
+    let mut faces = Database::new();
+    faces.load_font_data(fonts::REGULAR.to_vec());
+    faces.load_font_data(fonts::SEMIBOLD.to_vec());
+    faces.set_sans_serif_family(fonts::FAMILY);
+    let options = Options { fontdb: Arc::new(faces), ..Options::default() };
+    let tree = Tree::from_str(svg, &options).map_err(io::Error::other)?;
+    let mut pixels = Pixmap::new(width, height)
+        .ok_or_else(|| io::Error::other(format!("no room for {width} x {height} pixels")))?;
     resvg::render(&tree, Transform::identity(), &mut pixels.as_mut());
-    pixels.encode_png().map_err(io::Error::other)
+    Ok(pixels)
 }

@@ -18,11 +18,9 @@ const SMALL: f64 = 18.0;
 /// Room above the body, for the titles.
 const HEAD: f64 = 164.0;
 /// Room below the body, for the foot.
-const FOOT: f64 = 126.0;
+const FOOT: f64 = 150.0;
 /// Width of a column of changes from today.
 const BESIDE: f64 = 196.0;
-/// Mean width of a letter, a share of the size: enough to keep words inside.
-const LETTER: f64 = 0.56;
 
 /// A figure as an SVG document.
 pub fn svg(figure: &Figure, look: Look) -> String {
@@ -104,10 +102,10 @@ impl Page {
         let room = self.width - 2.0 * MARGIN;
         let (ink, soft) = (self.colours.ink, self.colours.soft_ink);
         let title = Words { at: [MARGIN, 82.0], size: TITLE, colour: ink, anchor: "start", is_heavy: true };
-        self.words(&title, &shortened(&figure.title, TITLE, room));
+        self.words(&title, &shortened(&figure.title, TITLE, room, true));
         let subtitle =
             Words { at: [MARGIN, 122.0], size: SUBTITLE, colour: soft, anchor: "start", is_heavy: false };
-        self.words(&subtitle, &shortened(&figure.subtitle, SUBTITLE, room));
+        self.words(&subtitle, &shortened(&figure.subtitle, SUBTITLE, room, false));
     }
 
     fn foot(&mut self, lines: &[String]) {
@@ -117,7 +115,7 @@ impl Page {
         for (number, line) in lines.iter().enumerate() {
             let at = [MARGIN, top + 25.0 * number as f64];
             let words = Words { at, size: SMALL, colour, anchor: "start", is_heavy: false };
-            self.words(&words, &shortened(line, SMALL, room));
+            self.words(&words, &shortened(line, SMALL, room, false));
         }
     }
 
@@ -139,7 +137,7 @@ impl Page {
             "<clipPath id=\"panel{number}\"><rect x=\"{x:.2}\" y=\"{y:.2}\" width=\"{width:.2}\" \
              height=\"{height:.2}\"/></clipPath>\n<g clip-path=\"url(#panel{number})\">\n"
         ));
-        for mark in &panel.marks {
+        for mark in panel.marks.iter().filter(|mark| mark.is_finite()) {
             self.mark(&inside, mark);
         }
         self.put(format_args!("</g>\n"));
@@ -157,7 +155,7 @@ impl Page {
         let start = if panel.up.has_words { MARGIN } else { left };
         let title =
             Words { at: [start, top - 14.0], size: HEADING, colour: ink, anchor: "start", is_heavy: true };
-        self.words(&title, &shortened(&panel.title, HEADING, right - start));
+        self.words(&title, &shortened(&panel.title, HEADING, right - start, true));
         let note =
             Words { at: [right, top - 14.0], size: SMALL, colour: soft, anchor: "end", is_heavy: false };
         self.words(&note, &panel.note);
@@ -240,7 +238,8 @@ impl Page {
 
     /// Words on their own ground, so that they read over whatever lies below; moved to stay inside the panel.
     fn label(&mut self, inside: &Inside<'_>, role: Role, at: [f64; 2], anchor: Anchor, text: &str) {
-        let (width, height) = (text_width(text, LABEL), LABEL * 1.25);
+        let is_heavy = matches!(role, Role::Var | Role::Es);
+        let (width, height) = (fonts::width(text, is_heavy) * LABEL, LABEL * 1.25);
         let (x, y) = (inside.x(at[0]), inside.y(at[1]));
         let (left, top) = match anchor {
             Anchor::BelowRight => (x + 14.0, y + 6.0),
@@ -262,9 +261,10 @@ impl Page {
             ));
         }
         let colour = self.colours.words(role);
-        let is_heavy = matches!(role, Role::Var | Role::Es);
-        let at = [left, top + LABEL * 0.97];
-        self.words(&Words { at, size: LABEL, colour, anchor: "start", is_heavy }, text);
+        let is_leftwards = matches!(anchor, Anchor::BelowLeft | Anchor::AboveLeft | Anchor::Left);
+        let (x, anchor) = if is_leftwards { (left + width, "end") } else { (left, "start") };
+        let at = [x, top + LABEL * 0.97];
+        self.words(&Words { at, size: LABEL, colour, anchor, is_heavy }, text);
     }
 
     fn area(&mut self, role: Role, path: &str) {
@@ -298,18 +298,24 @@ impl Page {
     }
 }
 
-fn text_width(text: &str, size: f64) -> f64 {
-    text.chars().count() as f64 * size * LETTER
-}
-
 /// Cut with an ellipsis where it would not fit.
-fn shortened(text: &str, size: f64, room: f64) -> String {
-    let most = (room / (size * LETTER)).max(1.0) as usize;
-    if text.chars().count() <= most {
+fn shortened(text: &str, size: f64, room: f64, is_heavy: bool) -> String {
+    let fits = |text: &str| fonts::width(text, is_heavy) * size <= room;
+    if fits(text) {
         return text.to_owned();
     }
-    let kept: String = text.chars().take(most.saturating_sub(1)).collect();
-    format!("{}\u{2026}", kept.trim_end())
+    let letters: Vec<char> = text.chars().collect();
+    let with_ellipsis = |kept: usize| {
+        let start: String = letters[..kept].iter().collect();
+        format!("{}\u{2026}", start.trim_end())
+    };
+    // The longest start that fits: widths only grow with the letters kept.
+    let (mut fitting, mut too_long) = (0, letters.len());
+    while too_long - fitting > 1 {
+        let middle = usize::midpoint(fitting, too_long);
+        *if fits(&with_ellipsis(middle)) { &mut fitting } else { &mut too_long } = middle;
+    }
+    with_ellipsis(fitting)
 }
 
 /// What XML would take for markup, escaped; what it can't hold at all, left out.

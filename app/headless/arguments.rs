@@ -1,6 +1,7 @@
 //! The command line: every option with its unit and its bounds. Nothing is done with them here.
 
 use clap::{ArgGroup, Args, Parser, Subcommand, ValueEnum};
+use ebbmark_engine::figures::CAUTION;
 use ebbmark_engine::measures::Confidence;
 use jiff::civil::Date;
 use std::path::PathBuf;
@@ -17,9 +18,6 @@ pub struct Arguments {
     #[command(subcommand)]
     pub command: Option<Command>,
 }
-
-const CAUTION: &str = "Model estimates from stated assumptions; not investment advice and not a regulatory capital \
-figure. House policy, local rules and licensed practice come first.";
 
 /// A command that needs no screen.
 #[derive(Debug, Subcommand)]

@@ -4,7 +4,7 @@
 use super::answer::Answer;
 use super::columns::align;
 use super::writer::Writer;
-use ebbmark_engine::figures::{grouped, percent};
+use ebbmark_engine::figures::{CAUTION, grouped, percent};
 use ebbmark_engine::measures::LossFrom;
 use ebbmark_engine::measures::reading::{DrawdownRow, LossRow, MomentRow};
 
@@ -12,8 +12,7 @@ type Rows = Vec<Vec<String>>;
 
 const FOOT: &str = "\
 Ranges are 95 % simulation ranges, ± is one standard error: the noise of the simulation alone.
-Assumed: normal shocks, constant volatility, holdings unchanged, no flows. Model estimates from stated assumptions;
-not investment advice and not a regulatory capital figure. House policy, local rules and licensed practice come first.
+Assumed: normal shocks, constant volatility, holdings unchanged, no flows.
 ";
 
 /// The whole answer, ending with a line break.
@@ -26,7 +25,7 @@ pub(super) fn write(answer: &Answer, loss_from: LossFrom) -> String {
         align(&limit_rows(answer, &writer)),
         align(&moment_rows(answer, &writer)),
         pull(answer, &writer),
-        FOOT.into(),
+        format!("{FOOT}{CAUTION}\n"),
     ];
     let written: Vec<String> = sections.into_iter().filter(|section| !section.is_empty()).collect();
     written.join("\n")

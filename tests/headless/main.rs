@@ -4,6 +4,7 @@
 #![allow(clippy::unwrap_used, reason = "a test that can't go on has failed")]
 
 mod examples;
+mod exports;
 mod faults;
 mod figures;
 mod no_display;

@@ -24,11 +24,8 @@ use super::commands::{Command, Queue};
 use super::session::Session;
 use super::theme::{self, Palette};
 use crate::workspace::Tab;
+use ebbmark_engine::figures::CAUTION;
 use egui::{CentralPanel, Frame, Margin, Panel, ScrollArea, Stroke, Ui};
-
-/// What stands in the foot, once a window.
-const CAUTION: &str = "Model estimates from stated assumptions; not investment advice and not a regulatory capital figure. \
-                       House policy, local rules and licensed practice come first.";
 
 /// Draws the whole window.
 pub fn window_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {

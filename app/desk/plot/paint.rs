@@ -20,7 +20,7 @@ pub fn panel(painter: &Painter, frame: &Frame, palette: &Palette, panel: &Panel,
         painter.text(at, Align2::LEFT_TOP, &panel.across.name, axes::font(), palette.soft_ink);
     }
     let inside = painter.with_clip_rect(frame.rect.intersect(painter.clip_rect()));
-    for shown in &panel.marks {
+    for shown in panel.marks.iter().filter(|mark| mark.is_finite()) {
         mark(&inside, frame, palette, shown);
     }
 }

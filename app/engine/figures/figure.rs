@@ -225,3 +225,16 @@ impl Span {
         (value - self.from) / (self.to - self.from)
     }
 }
+
+impl Mark {
+    /// Whether it stands anywhere: a level, an upright, a dot or a label at a number. Points of bands and lines that are
+    /// no numbers are left out one by one by whoever draws.
+    pub fn is_finite(&self) -> bool {
+        match self {
+            Self::Level { up, .. } => up.is_finite(),
+            Self::Upright { across, .. } => across.is_finite(),
+            Self::Dot { at, .. } | Self::Label { at, .. } => at.iter().all(|value| value.is_finite()),
+            Self::Band { .. } | Self::SideBand { .. } | Self::Line { .. } => true,
+        }
+    }
+}

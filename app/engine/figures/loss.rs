@@ -42,14 +42,16 @@ fn marks(subject: &Subject<'_>, losses: &Density, top: f64) -> Vec<Mark> {
         Mark::Upright { role: Role::Today, across: 0.0 },
         Mark::Upright { role: Role::Var, across: row.var },
         Mark::Upright { role: Role::Es, across: row.es },
-        label(Role::Var, [row.var, top * 0.86], Anchor::BelowLeft, subject.var_words()),
-        label(Role::Es, [row.es, top * 0.76], Anchor::BelowRight, subject.es_words()),
     ];
     if let Some(limit) = limit_loss(subject) {
         let words = format!("loss limit {}", subject.money().figure(limit, 0.0));
+        let anchor = if limit < row.var { Anchor::BelowLeft } else { Anchor::BelowRight };
         marks.push(Mark::Upright { role: Role::Limit, across: limit });
-        marks.push(label(Role::Limit, [limit, top * 0.62], Anchor::BelowRight, words));
+        marks.push(label(Role::Limit, [limit, top * 0.74], anchor, words));
     }
+    // Words come last and at heights of their own, so that no line crosses them.
+    marks.push(label(Role::Var, [row.var, top * 0.94], Anchor::BelowRight, subject.var_words()));
+    marks.push(label(Role::Es, [row.es, top * 0.84], Anchor::BelowRight, subject.es_words()));
     marks
 }
 

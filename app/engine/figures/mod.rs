@@ -38,3 +38,8 @@ pub struct Room {
 fn with_unit(title: &str, unit: &str) -> String {
     if unit.is_empty() { title.to_owned() } else { format!("{title}, {unit}") }
 }
+
+/// "21 trading days".
+fn days_words(day: u32) -> String {
+    if day == 1 { "1 trading day".to_owned() } else { format!("{day} trading days") }
+}

@@ -1,7 +1,7 @@
 //! Whole figures for the page: panels placed, the figures in words, and a foot that says what was assumed.
 
 use super::figure::{Figure, Place};
-use super::{Room, Subject, confidence_words, fall, grouped, half_range, loss, value};
+use super::{Room, Subject, confidence_words, days_words, fall, grouped, half_range, loss, value};
 use crate::book::DiffusionKind;
 use crate::measures::LossFrom;
 use jiff::civil::Date;
@@ -100,15 +100,12 @@ fn foot(subject: &Subject<'_>) -> Vec<String> {
         LossFrom::Mean => "losses count from the expected value",
     };
     vec![
-        format!("Model: {factors}; read at {}; {paths}; {prices}; {reference}.", days_words(subject.day)),
+        format!("Model: {factors}; exact joint transition, daily steps; read at {}.", days_words(subject.day)),
+        format!("Run: {paths}; {prices}; {reference}."),
         "Assumed: normal shocks, constant volatility, holdings unchanged, no flows. Ranges are 95 % simulation ranges."
             .to_owned(),
         CAUTION.to_owned(),
     ]
-}
-
-fn days_words(day: u32) -> String {
-    if day == 1 { "1 trading day".to_owned() } else { format!("{day} trading days") }
 }
 
 /// "30 Nov 2026".

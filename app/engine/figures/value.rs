@@ -1,7 +1,7 @@
 //! The book's value ahead as nested bands, and beside it, on the same axis, its distribution at the reading line.
 
 use super::figure::{Anchor, Axis, Mark, Panel, Place, Role, Span, Tick};
-use super::{Money, Room, Subject, percent, signed, ticks, with_unit};
+use super::{Money, Room, Subject, days_words, percent, signed, ticks, with_unit};
 use crate::measures::Density;
 
 /// Bands from the widest to the narrowest: places of their edges, role, and what they hold.
@@ -48,7 +48,7 @@ pub fn beside(subject: &Subject<'_>, up: Span, room: Room, place: Place) -> Pane
     let across = Span::new(0.0, longest(density));
     Panel {
         place,
-        title: format!("At {} days", subject.day),
+        title: format!("At {}", days_words(subject.day)),
         note: String::new(),
         across: Axis { span: across, ticks: Vec::new(), has_words: false, name: String::new() },
         up: money_axis(&subject.money(), up, room.up, false),

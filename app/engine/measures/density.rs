@@ -29,7 +29,8 @@ impl Density {
 ///
 /// The sample is binned and smoothed by a normal kernel on the scale `u = asinh((x - median) / spread)`, straight in the
 /// middle and logarithmic in the tails, so that a long tail neither takes the middle's bins nor falls apart. The kernel's
-/// width is Silverman's `0.9 n^(-1/5)` in units of the spread (Density Estimation, 1986, section 3.4; from memory); at the
+/// width is the normal reference rule's `1.06 n^(-1/5)` in units of the spread (Silverman, Density Estimation, 1986, section 3.4;
+/// from memory); at the
 /// ends it is reflected.
 pub fn density(sample: &[f64]) -> Density {
     let mut sample: Vec<f64> = sample.iter().copied().filter(|value| value.is_finite()).collect();
@@ -49,7 +50,7 @@ pub fn density(sample: &[f64]) -> Density {
     for value in &sample {
         share_between_points(&mut shares, (scale.at(*value) - from) / step);
     }
-    let width = (0.9 * (sample.len() as f64).powf(-0.2) / step).max(1.0);
+    let width = (1.06 * (sample.len() as f64).powf(-0.2) / step).max(1.0);
     let places = (0..POINTS).map(|k| from + k as f64 * step);
     // The ends are the sample's own, whatever the rounding of the scale.
     let mut at: Vec<f64> = places.clone().map(|u| scale.back(u).clamp(low, high)).collect();

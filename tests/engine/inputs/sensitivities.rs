@@ -1,4 +1,5 @@
-//! Holdings known by what they earn for a move.
+//! Holdings known by what they earn for a move of a factor, under each diffusion and unit of it, and moves that it does not
+//! have.
 
 use super::{Texts, model, refused};
 use ebbmark_engine::factors::{CurrencyPart, Term};
