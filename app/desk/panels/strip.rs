@@ -166,7 +166,7 @@ fn run_ui(ui: &mut Ui, session: &Session, queue: &mut Queue, at_line: &AtLine, r
 fn state_words(session: &Session, at_line: &AtLine, row: &LossRow) -> String {
     let live = session.live();
     if live.is_before_edit {
-        return "from before the edit".to_owned();
+        return "\u{26a0} from before the edit".to_owned();
     }
     let Some(paths) = at_line.paths else { return "closed form, paths to come".to_owned() };
     let error = match (row.var_low, row.var_high) {

@@ -11,7 +11,7 @@ pub mod matrix;
 use crate::desk::commands::Queue;
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
-use egui::{Align, Label, Layout, Ui};
+use egui::{Align, Layout, Ui};
 use matrix::Matrix;
 
 /// Draws the view.
@@ -23,7 +23,7 @@ pub fn correlation_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         return;
     };
     let chosen = chosen_cell(session, &matrix);
-    title_ui(ui, session, &matrix);
+    title_ui(ui, &matrix);
     cell::cell_ui(ui, queue, &matrix, chosen);
     ui.add_space(4.0);
     map::map_ui(ui, queue, &matrix, chosen);
@@ -36,7 +36,7 @@ fn chosen_cell(session: &Session, matrix: &Matrix<'_>) -> (usize, usize) {
     chosen.unwrap_or((1, 0))
 }
 
-fn title_ui(ui: &mut Ui, session: &Session, matrix: &Matrix<'_>) {
+fn title_ui(ui: &mut Ui, matrix: &Matrix<'_>) {
     ui.horizontal(|ui| {
         ui.label(theme::strong("Correlation of the factors' shocks"));
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
@@ -47,10 +47,4 @@ fn title_ui(ui: &mut Ui, session: &Session, matrix: &Matrix<'_>) {
             ui.label(if is_possible { text } else { text.color(Palette::of(ui).loss) });
         });
     });
-    let faults = session.faults();
-    if !faults.is_empty() && matrix.smallest_eigenvalue(ui) < matrix::LEAST_EIGENVALUE {
-        let words = "\u{26a0} No set of factors can be correlated like this. The figures are from before the edit: \
-                     bring the cell back into its legal range, or undo.";
-        ui.add(Label::new(theme::soft(ui, words).color(Palette::of(ui).loss)).wrap());
-    }
 }

@@ -1,5 +1,5 @@
 //! The Horizon view: the book's value ahead with the reading line, its distribution at the line, and below them the
-//! largest fall so far with its own. Places the four charts; each is drawn in a file of its own.
+//! largest fall so far with its own. Places the four charts that the engine's figures describe.
 
 /// Horizons at one press, and how far ahead the window looks.
 pub mod choices;
@@ -11,8 +11,8 @@ use crate::desk::plot::{Frame, Span, paint, settled};
 use crate::desk::readout::subject;
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
-use ebbmark_engine::figures::{Panel, Place, Room, Subject, fall, value};
-use egui::{Align, Label, Layout, Rect, Sense, Ui, pos2, vec2};
+use ebbmark_engine::figures::{Mark, Panel, Place, Room, Subject, fall, value};
+use egui::{Align, Label, Layout, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2};
 
 /// Room for the words of the left axis.
 const LEFT_POINTS: f32 = 52.0;
@@ -41,9 +41,11 @@ pub fn horizon_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     };
     let subject = subject(session.document(), model, bands, at_line);
     let choices_height = choices::height(ui.available_width());
-    let (rect, _) = ui.allocate_exact_size(ui.available_size() - vec2(0.0, choices_height), Sense::hover());
+    let room = ui.available_size() - vec2(0.0, choices_height);
+    let (rect, response) = ui.allocate_exact_size(room, Sense::hover());
     let places = Places::within(rect);
     let charts = Charts::of(ui, &places, &subject);
+    response.widget_info(|| WidgetInfo::labeled(Role::Image, true, charts.words()));
     let note = if live.is_before_edit { "\u{26a0} from before the edit" } else { &charts.ahead.1.note };
     title_ui(ui, places.upper_title, &charts.ahead.1.title, note);
     title_ui(ui, places.lower_title, &charts.falls.1.title, &charts.falls.1.note);
@@ -99,6 +101,18 @@ struct Charts {
 }
 
 impl Charts {
+    /// Titles and labels, for those who cannot see the charts.
+    fn words(&self) -> String {
+        let words = |(_, panel): &(Frame, Panel)| {
+            let labels = panel.marks.iter().filter_map(|mark| match mark {
+                Mark::Label { words, .. } => Some(words.as_str()),
+                _ => None,
+            });
+            [panel.title.as_str()].into_iter().chain(labels).collect::<Vec<_>>().join(", ")
+        };
+        [words(&self.ahead), words(&self.falls)].join("; ")
+    }
+
     /// The charts in the room they have; their ranges stand still while figures arrive.
     fn of(ui: &Ui, places: &Places, subject: &Subject<'_>) -> Self {
         let key = |name: &str| ui.scope_id().with(name);
