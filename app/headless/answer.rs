@@ -1,4 +1,4 @@
-//! The answer of `ebbmark read`, field by field in the order of the page. Serialises itself; computes nothing.
+//! The answer of `ebbmark read`, field by field in the order of the README. Serialises itself; computes nothing.
 
 use ebbmark_engine::measures::reading::{DrawdownReading, LimitReading, LossRow, MomentsReading};
 use ebbmark_engine::tables::Notice;

@@ -56,7 +56,7 @@ pub struct ReadArguments {
     /// How the run is made and the answer printed
     #[command(flatten)]
     pub output: OutputArguments,
-    /// Options of the page that later versions honour
+    /// Options that later versions honour
     #[command(flatten)]
     pub later: LaterArguments,
 }
@@ -140,7 +140,7 @@ pub struct OutputArguments {
     pub quiet: bool,
 }
 
-/// Options of the page that this version does not honour yet: each is answered with "not yet".
+/// Options that this version does not honour yet: each is answered with "not yet".
 #[derive(Debug, Default, Args)]
 #[command(next_help_heading = "Not yet")]
 pub struct LaterArguments {

@@ -12,3 +12,4 @@ mod options;
 mod schema;
 mod streams;
 mod support;
+mod workspace;

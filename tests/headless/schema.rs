@@ -1,4 +1,4 @@
-//! The JSON object of `read`: every field of the page, in its order, with its type. Values are looked at elsewhere.
+//! The JSON object of `read`: every field of the README, in its order, with its type. Values are looked at elsewhere.
 
 use super::support::{call, read_json};
 use serde_json::Value;
@@ -75,7 +75,7 @@ fn exact_fields_of_rows() {
 }
 
 #[test]
-fn exact_fields_in_the_order_of_the_page() {
+fn exact_fields_in_their_order() {
     let out = call(&["read", "--json", "--paths", "1000", "--quiet"]).out;
     let order = [
         "book",
