@@ -64,6 +64,11 @@ impl Notices {
             .for_each(|notice| self.add(notice, false));
     }
 
+    /// Whether a message holds of the model at hand; the others answer something that was asked for.
+    pub fn is_standing(&self, note: &Note) -> bool {
+        self.standing.contains(&note.notice)
+    }
+
     /// Puts one away.
     pub fn dismiss(&mut self, id: u64) {
         self.notes.retain(|note| note.id != id);

@@ -72,6 +72,7 @@ pub fn window_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
             card_ui(ui, |ui| centre_ui(ui, session, queue));
         },
     );
+    notices::answers_ui(ui, session, queue);
     opening::opening_ui(ui, session, queue);
 }
 

@@ -5,18 +5,43 @@ use crate::desk::notices::Note;
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette, section_ui};
 use ebbmark_engine::tables::NoticeLevel;
-use egui::{Align, Label, Layout, Ui};
+use egui::{Align, Align2, Area, Frame, Id, Label, Layout, Order, Ui, vec2};
 
-/// Draws them, newest first; nothing where there are none.
+/// Width of an answer.
+const ANSWER_POINTS: f32 = 272.0;
+/// Most answers shown at once.
+const MOST_ANSWERS: usize = 2;
+/// Distance of the answers from the lower edge, clear of the foot.
+const ABOVE_FOOT: f32 = 34.0;
+
+/// Draws what holds of the model, newest first; nothing where there is none.
 pub fn notices_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let notes = session.notices().all();
-    if notes.is_empty() {
+    let notices = session.notices();
+    let mut standing = notices.all().iter().rev().filter(|note| notices.is_standing(note)).peekable();
+    if standing.peek().is_some() {
+        section_ui(ui, "Notices");
+    }
+    standing.for_each(|note| note_ui(ui, queue, note));
+}
+
+/// Draws the newest answers to what was asked for - saved, exported, or why not - over the lower right corner, where
+/// least is pressed.
+pub fn answers_ui(ui: &Ui, session: &Session, queue: &mut Queue) {
+    let notices = session.notices();
+    let answers: Vec<&Note> =
+        notices.all().iter().rev().filter(|note| !notices.is_standing(note)).take(MOST_ANSWERS).collect();
+    if answers.is_empty() {
         return;
     }
-    section_ui(ui, "Notices");
-    for note in notes.iter().rev() {
-        note_ui(ui, queue, note);
-    }
+    let area = Area::new(Id::unique("answers")).order(Order::Foreground);
+    area.anchor(Align2::RIGHT_BOTTOM, vec2(-14.0, -ABOVE_FOOT)).show(ui.ctx(), |ui| {
+        for note in answers {
+            Frame::popup(ui.style()).show(ui, |ui| {
+                ui.set_width(ANSWER_POINTS);
+                note_ui(ui, queue, note);
+            });
+        }
+    });
 }
 
 fn note_ui(ui: &mut Ui, queue: &mut Queue, note: &Note) {
