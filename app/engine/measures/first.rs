@@ -158,7 +158,7 @@ fn limit_reading(exact: &ExactMoments, law: &ShiftedLognormal, today: f64, limit
         loss: limit,
         at_horizon,
         at_horizon_error: 0.0,
-        by_horizon: by_horizon.clamp(at_horizon, 1.0),
+        by_horizon: by_horizon.min(1.0).max(at_horizon),
         by_horizon_error: 0.0,
     }
 }

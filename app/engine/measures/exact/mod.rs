@@ -14,7 +14,8 @@ pub struct ExactMoments {
     pub mean: f64,
     /// Mean less today's value, money; keeps its digits where the mean is large beside it.
     pub change: f64,
-    /// Standard deviation, money; 0 where the book's variance lies within the rounding of its parts.
+    /// Standard deviation, money; 0 where the book's variance lies within the rounding of its parts, infinite where no
+    /// double holds it.
     pub sd: f64,
     /// Third central moment over `sd^3`; none at an sd of 0.
     pub skewness: Option<f64>,
@@ -39,8 +40,19 @@ pub fn exact_moments(model: &Model, day: u32) -> ExactMoments {
     let years = f64::from(day) / model.days_per_year;
     let system = System::of(model, years);
     let (variance, gross_sd) = system.variance();
-    let sd = variance.max(0.0).sqrt();
-    let sd = if sd > ROUNDING_OF_SD * gross_sd { sd } else { 0.0 };
+    let sd = sd_of(variance, gross_sd);
     let skewness = (sd > 0.0).then(|| system.third_central() / (sd * sd * sd));
     ExactMoments { mean: model.value + system.change, change: system.change, sd, skewness }
+}
+
+/// Infinite where no double holds the variance; 0 where it lies within the rounding of its parts.
+fn sd_of(variance: f64, gross_sd: f64) -> f64 {
+    let sd = variance.max(0.0).sqrt();
+    if !variance.is_finite() {
+        f64::INFINITY
+    } else if sd > ROUNDING_OF_SD * gross_sd {
+        sd
+    } else {
+        0.0
+    }
 }
