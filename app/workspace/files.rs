@@ -72,7 +72,7 @@ impl WorkspaceError {
             Self::Format { path, error: FormatError::Unreadable { reason, line } } => {
                 (path, Some(line), reason, "a workspace as this program writes it".to_owned())
             }
-            Self::Format { path, error: FormatError::Setting { found, expected } } => {
+            Self::Format { path, error: FormatError::Value { found, expected } } => {
                 (path, None, found, expected)
             }
         };

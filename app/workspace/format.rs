@@ -1,5 +1,6 @@
 //! Workspaces and kept sessions as RON text, `format: 1`. Files are opened and written next door.
 
+use super::check_rows;
 use super::document::{FEWEST_PATHS, MOST_PATHS};
 use super::{Document, Kept, LONGEST_HORIZON_DAYS, Settings, View, Workspace};
 use ebbmark_engine::factors::Inputs;
@@ -32,10 +33,10 @@ pub enum FormatError {
         /// Line, from 1.
         line: usize,
     },
-    /// A setting lies outside its range.
+    /// A value lies outside its range.
     #[error("found {found}, expected {expected}")]
-    Setting {
-        /// The setting and its value.
+    Value {
+        /// What it is, and the value.
         found: String,
         /// Its range.
         expected: String,
@@ -159,6 +160,7 @@ impl WorkspaceText {
     }
 
     fn checked(self) -> Result<Workspace, FormatError> {
+        check_rows(&self.inputs)?;
         let document = Document {
             name: self.name,
             inputs: Arc::new(self.inputs),
@@ -226,6 +228,6 @@ impl SettingsText {
 }
 
 fn within(name: &str, value: impl std::fmt::Display, is_legal: bool, range: &str) -> Result<(), FormatError> {
-    let refusal = || FormatError::Setting { found: format!("{name} {value}"), expected: range.to_owned() };
+    let refusal = || FormatError::Value { found: format!("{name} {value}"), expected: range.to_owned() };
     if is_legal { Ok(()) } else { Err(refusal()) }
 }

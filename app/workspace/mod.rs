@@ -7,6 +7,8 @@ pub mod document;
 pub mod view;
 /// Workspaces and kept sessions as text.
 pub mod format;
+/// Rows that a hand may have been at.
+pub mod soundness;
 /// Files that are never half written.
 pub mod whole;
 /// Workspaces as files.
@@ -18,6 +20,7 @@ pub use document::{Document, LONGEST_HORIZON_DAYS, Settings};
 pub use files::{EXTENSION, WorkspaceError, is_workspace, read, write};
 pub use format::{FORMAT, FormatError};
 pub use recovery::{Beginning, Slot, state_folder};
+pub use soundness::check_rows;
 use std::path::PathBuf;
 pub use view::{BookColumn, BookOrder, Tab, Theme, View};
 pub use whole::write_whole;

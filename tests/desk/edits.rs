@@ -183,6 +183,14 @@ fn always_a_row_stays_what_its_kind_says() {
 }
 
 #[test]
+fn always_a_level_below_zero_becomes_a_price_above() {
+    let below = after(&document(), change(1, HoldingChange::Price(-0.4)));
+    assert_eq!(below.inputs.holdings[1].price, -0.4);
+    let spot = after(&below, change(1, HoldingChange::Kind(Kind::Spot)));
+    assert_eq!(spot.inputs.holdings[1].price, 1.0);
+}
+
+#[test]
 fn always_an_added_holding_has_a_name_of_its_own() {
     let cash = Box::new(holding("Cash", Kind::Cash, 1.0, 1.0));
     let once = after(&document(), Command::AddHolding(cash.clone()));

@@ -91,7 +91,28 @@ fn always_settings_out_of_range_are_refused() {
     ] {
         let bad = text.replace(from, to);
         assert_ne!(bad, text, "{from} is not written");
-        assert!(matches!(workspace_of_text(&bad), Err(FormatError::Setting { .. })), "{to}");
+        assert!(matches!(workspace_of_text(&bad), Err(FormatError::Value { .. })), "{to}");
+    }
+}
+
+/// A workspace is text: a hand may have been at it, and nothing it can write ends in a panic further on.
+#[test]
+fn always_rows_that_no_file_could_hold_are_refused() {
+    let text = text_of_workspace(&workspace()).unwrap();
+    for (from, to) in [
+        ("quantity: 1000.0", "quantity: NaN"),
+        ("price: 50.0", "price: -50.0"),
+        ("price: 50.0", "price: inf"),
+        ("name: \"Rate\"", "name: \"Harbour\""),
+        ("name: \"Rate\"", "name: \"\""),
+        ("cells: [1.0, -0.3, -0.3, 1.0]", "cells: [1.0, -0.3, -0.3]"),
+        ("cells: [1.0, -0.3, -0.3, 1.0]", "cells: [1.0, -0.3, 0.3, 1.0]"),
+        ("cells: [1.0, -0.3, -0.3, 1.0]", "cells: [1.0, -1.3, -1.3, 1.0]"),
+        ("cells: [1.0, -0.3, -0.3, 1.0]", "cells: [0.9, -0.3, -0.3, 1.0]"),
+    ] {
+        let bad = text.replace(from, to);
+        assert_ne!(bad, text, "{from} is not written in\n{text}");
+        assert!(matches!(workspace_of_text(&bad), Err(FormatError::Value { .. })), "{to}");
     }
 }
 

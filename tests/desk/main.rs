@@ -7,6 +7,8 @@ mod support;
 mod hand;
 /// Edits of holdings, factors, correlations and settings.
 mod edits;
+/// Any edits in any order.
+mod any;
 /// Messages.
 mod notices;
 /// Steps back and forth.

@@ -85,6 +85,8 @@ fn set_kind(inputs: &mut Inputs, row: usize, kind: Kind) -> Option<()> {
     match kind {
         Kind::Cash => holding.price = 1.0,
         Kind::Exposure => holding.quantity = 1.0,
+        // A level of any sign may have stood there; a price is positive.
+        Kind::Spot if holding.price <= 0.0 => holding.price = 1.0,
         Kind::Spot | Kind::Level => {}
     }
     let name = holding.name.clone();

@@ -10,7 +10,7 @@ pub mod holdings;
 pub mod settings;
 
 use crate::desk::commands::Command;
-use crate::workspace::Document;
+use crate::workspace::{Document, check_rows};
 use ebbmark_engine::factors::{Inputs, Model};
 use std::sync::Arc;
 
@@ -21,7 +21,11 @@ pub fn edited(document: &Document, model: Option<&Model>, command: &Command) -> 
     match command {
         Command::RenameBook(name) => new.name.clone_from(name),
         Command::ChangeSetting(change) => settings::change(&mut new.settings, change)?,
-        other => edit_inputs(Arc::make_mut(&mut new.inputs), model, other)?,
+        other => {
+            edit_inputs(Arc::make_mut(&mut new.inputs), model, other)?;
+            // What could not be kept and read again is not taken: nothing typed may be lost.
+            check_rows(&new.inputs).ok()?;
+        }
     }
     (new != *document).then_some(new)
 }
