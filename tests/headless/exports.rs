@@ -2,6 +2,7 @@
 
 use ebbmark::export::{Look, Tone, csv, png, svg};
 use ebbmark::opening::built_in_example;
+use ebbmark_engine::book::{Holding, Kind, TypedFigure};
 use ebbmark_engine::factors::{Model, ModelSettings};
 use ebbmark_engine::figures::{CAUTION, Figure, Subject, distribution_figure, horizon_figure};
 use ebbmark_engine::measures::{Bands, Conventions, Density, LossFrom, Reading, bands, density, reading};
@@ -22,7 +23,12 @@ struct Shown {
 
 impl Shown {
     fn example(name: &str) -> Self {
-        let opened = built_in_example().unwrap();
+        Self::altered(name, |_| ())
+    }
+
+    fn altered(name: &str, alter: impl Fn(&mut Holding)) -> Self {
+        let mut opened = built_in_example().unwrap();
+        opened.inputs.holdings.iter_mut().for_each(alter);
         let settings = ModelSettings { book_currency: opened.book_currency, days_per_year: 252.0 };
         let model = Model::assemble(&opened.inputs, &settings).unwrap();
         let loss_limit = Some(6.5e6);
@@ -156,4 +162,33 @@ fn always_numbers_read_back_to_the_same_double() {
     let expected = shown.bands.values[125].iter().chain(&shown.bands.falls[125]);
     let cells: Vec<f64> = last.split(',').skip(1).map(|cell| cell.parse().unwrap()).collect();
     assert!(last.starts_with("126,") && cells.iter().eq(expected), "{last}");
+}
+
+#[test]
+fn always_extreme_books_are_drawn_and_written() {
+    let spot = |alter: fn(&mut Holding)| {
+        move |held: &mut Holding| {
+            if held.kind == Kind::Spot {
+                alter(held)
+            }
+        }
+    };
+    let wild = spot(|held| {
+        held.description.volatility = Some(TypedFigure { value: 20.0, has_percent_sign: true });
+    });
+    for shown in [
+        Shown::altered("Wild", wild),
+        Shown::altered("Immense", spot(|held| held.quantity *= 1e300)),
+        Shown::altered("Minute", spot(|held| held.quantity *= 1e-300)),
+        Shown::altered("Nothing", |held| {
+            held.quantity *= if held.kind == Kind::Exposure { 1.0 } else { 0.0 }
+        }),
+    ] {
+        for (name, figure) in shown.figures() {
+            let text = svg(&figure, Look::DECK);
+            assert!(!text.contains("NaN") && !text.contains("inf"), "{name} of {}", shown.name);
+            png(&figure, Look::DECK).unwrap();
+        }
+        assert!(csv::reading_csv(21, &shown.reading).lines().count() > 10);
+    }
 }
