@@ -52,6 +52,11 @@ pub fn bottom(painter: &Painter, frame: &Frame, palette: &Palette, ticks: &[Tick
     }
 }
 
+/// Width of a tick's words.
+pub fn width(painter: &Painter, words: &str) -> f32 {
+    painter.layout_no_wrap(words.to_owned(), font(), Default::default()).size().x
+}
+
 /// Font of ticks and labels.
 pub fn font() -> FontId {
     FontId::new(theme::SMALL_POINTS, FontFamily::Proportional)

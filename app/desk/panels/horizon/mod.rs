@@ -7,17 +7,15 @@ pub mod choices;
 pub mod line;
 
 use crate::desk::commands::Queue;
-use crate::desk::plot::{Frame, Span, paint, settled};
+use crate::desk::plot::{Frame, Span, axes, paint, settled};
 use crate::desk::readout::subject;
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
-use ebbmark_engine::figures::{Mark, Panel, Place, Room, Subject, fall, value};
-use egui::{Align, Label, Layout, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2};
+use ebbmark_engine::figures::{Mark, Panel, Place, Room, Subject, Tick, fall, value};
+use egui::{Align, Label, Layout, Painter, Rect, Role, Sense, Ui, WidgetInfo, pos2, vec2};
 
-/// Room for the words of the left axis.
-const LEFT_POINTS: f32 = 52.0;
-/// Room for the change from today, between a chart and its distribution.
-const CHANGE_POINTS: f32 = 98.0;
+/// Least room for the words of the left axis, and for the change from today, between a chart and its distribution.
+const LEAST_MARGINS: Margins = Margins { left: 52.0, change: 98.0 };
 /// Room for the words below.
 const BELOW_POINTS: f32 = 20.0;
 /// Height of a chart's title.
@@ -43,18 +41,40 @@ pub fn horizon_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     let choices_height = choices::height(ui.available_width());
     let room = ui.available_size() - vec2(0.0, choices_height);
     let (rect, response) = ui.allocate_exact_size(room, Sense::hover());
-    let places = Places::within(rect);
-    let charts = Charts::of(ui, &places, &subject);
+    let drafted = Charts::of(ui, &Places::within(rect, LEAST_MARGINS), &subject);
+    let margins = Margins::of(ui.painter(), &drafted);
+    let places = Places::within(rect, margins);
+    let charts = if margins == LEAST_MARGINS { drafted } else { Charts::of(ui, &places, &subject) };
     response.widget_info(|| WidgetInfo::labeled(Role::Image, true, charts.words()));
     let note = if live.is_before_edit { "\u{26a0} from before the edit" } else { &charts.ahead.1.note };
     title_ui(ui, places.upper_title, &charts.ahead.1.title, note);
     title_ui(ui, places.lower_title, &charts.falls.1.title, &charts.falls.1.note);
     let palette = Palette::of(ui);
     for (frame, panel) in [&charts.ahead, &charts.values, &charts.falls, &charts.fall_sizes] {
-        paint::panel(ui.painter(), frame, palette, panel, CHANGE_POINTS - 10.0);
+        paint::panel(ui.painter(), frame, palette, panel, margins.change - 10.0);
     }
     line::line_ui(ui, session, queue, &charts.ahead.0, &charts.falls.0);
     choices::choices_ui(ui, session, queue);
+}
+
+/// Room for words beside the charts.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct Margins {
+    left: f32,
+    change: f32,
+}
+
+impl Margins {
+    /// What the words of the charts need.
+    fn of(painter: &Painter, charts: &Charts) -> Self {
+        let widest =
+            |ticks: &[Tick]| ticks.iter().map(|tick| axes::width(painter, &tick.words)).fold(0.0, f32::max);
+        let (ahead, falls) = (&charts.ahead.1, &charts.falls.1);
+        Self {
+            left: LEAST_MARGINS.left.max(widest(&ahead.up.ticks).max(widest(&falls.up.ticks)) + 8.0),
+            change: LEAST_MARGINS.change.max(widest(&ahead.beside) + 20.0),
+        }
+    }
 }
 
 /// Where the parts stand.
@@ -68,10 +88,10 @@ struct Places {
 }
 
 impl Places {
-    fn within(rect: Rect) -> Self {
+    fn within(rect: Rect, margins: Margins) -> Self {
         let beside = (rect.width() * 0.2).clamp(84.0, 190.0);
-        let left = rect.left() + LEFT_POINTS;
-        let right = rect.right() - beside - CHANGE_POINTS;
+        let left = rect.left() + margins.left;
+        let right = rect.right() - beside - margins.change;
         let charts = rect.height() - 2.0 * TITLE_POINTS - BELOW_POINTS - 10.0;
         let upper_top = rect.top() + TITLE_POINTS;
         let upper_bottom = upper_top + charts * UPPER_SHARE;

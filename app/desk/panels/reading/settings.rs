@@ -22,7 +22,8 @@ pub fn confidences_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         settings.confidences.iter().map(|level| confidence_words(level.value())).collect();
     let complaint_id = ui.scope_id().with("confidence complaint");
     field_row_ui(ui, "Confidence levels", |ui| {
-        let field = CommittedText { name: "Confidence levels", hint: "95 %, 99 %", width: FIELD_POINTS };
+        let width = (ui.available_width() - 110.0).max(FIELD_POINTS);
+        let field = CommittedText { name: "Confidence levels", hint: "95 %, 99 %", width };
         let (response, typed) = field.ui(ui, &shown.join(", "));
         response.on_hover_text("Between 50 and 100 %, commas between them");
         let Some(typed) = typed else { return };
