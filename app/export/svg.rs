@@ -160,7 +160,7 @@ impl Page {
             Words { at: [right, top - 14.0], size: SMALL, colour: soft, anchor: "end", is_heavy: false };
         self.words(&note, &panel.note);
         let name = Words {
-            at: [right + 14.0, bottom + 28.0],
+            at: [right + 36.0, bottom + 28.0],
             size: SMALL,
             colour: soft,
             anchor: "start",

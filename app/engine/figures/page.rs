@@ -80,13 +80,7 @@ fn foot(subject: &Subject<'_>) -> Vec<String> {
     };
     let paths = subject.paths.map_or_else(
         || "closed form, no paths yet".to_owned(),
-        |paths| {
-            format!(
-                "{} paths, seed {}, daily steps, exact transition",
-                grouped(paths as f64, 0),
-                subject.seed
-            )
-        },
+        |paths| format!("{} paths, seed {}", grouped(paths as f64, 0), subject.seed),
     );
     let prices = subject.as_of.map_or_else(
         || "prices without a date".to_owned(),

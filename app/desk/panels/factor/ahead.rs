@@ -1,43 +1,45 @@
 //! Where the chosen factor is headed by itself: its exact mean and its 50 and 90 % bands, as a small chart.
 
-use crate::desk::plot::{Frame, Span, Tick, axes, marks, settled, ticks};
+use crate::desk::plot::{Span, Tick, settled, ticks};
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
 use ebbmark_engine::book::HalfLife;
 use ebbmark_engine::factors::{Diffusion, Model, RiskFactor};
 use ebbmark_engine::figures::grouped;
 use ebbmark_engine::measures::{FactorAhead, factor_ahead};
-use egui::{Align2, Id, Painter, Rect, Sense, Stroke, Ui, pos2};
+use egui::{Align2, Id, Response, RichText, Ui, Vec2};
+use egui_plot::{FilledArea, GridMark, HLine, Line, LineStyle, Plot, PlotBounds, PlotPoint, PlotUi, Text};
 use std::sync::Arc;
 
 /// Points of the time axis that are worked out.
 const POINTS: u32 = 60;
 /// Room for the words of the left axis.
 const LEFT_POINTS: f32 = 50.0;
-/// Room for the words below.
-const BELOW_POINTS: f32 = 18.0;
+/// Points between ticks, at least.
+const DAY_TICK_POINTS: f32 = 56.0;
+const LEVEL_TICK_POINTS: f32 = 28.0;
 /// Smallest height worth a chart.
-const LEAST_HEIGHT: f32 = 60.0;
+const LEAST_HEIGHT: f32 = 80.0;
 
 /// Draws the chart in the room that is left.
 pub fn ahead_ui(ui: &mut Ui, session: &Session, model: &Model, factor: &RiskFactor) {
-    if ui.available_height() < LEAST_HEIGHT + BELOW_POINTS {
+    if ui.available_height() < LEAST_HEIGHT {
         return;
     }
-    ui.label(theme::soft(ui, "Ahead by itself: mean, 50 and 90 % bands"));
+    ui.label(theme::soft(ui, "By itself: mean, half and 90 % of outcomes on each day"));
     let horizon = session.document().settings.horizon_days;
     let ahead = worked_out(ui, factor, model.days_per_year, horizon);
-    let size = ui.available_size();
-    let (rect, response) = ui.allocate_exact_size(size, Sense::hover());
-    let inside = Rect::from_min_max(
-        pos2(rect.left() + LEFT_POINTS, rect.top() + 4.0),
-        pos2(rect.right() - 14.0, rect.bottom() - BELOW_POINTS),
-    );
     let (low, high) = range(&ahead, factor);
     let key = ui.scope_id().with(("factor range", &factor.name));
-    let frame =
-        Frame { rect: inside, across: Span::new(0.0, f64::from(horizon)), up: settled(ui, key, low, high) };
-    draw(ui.painter(), &frame, Palette::of(ui), &ahead, factor);
+    let chart = Chart {
+        palette: Palette::of(ui),
+        across: Span::new(0.0, f64::from(horizon)),
+        up: settled(ui, key, low, high),
+        today: today(factor),
+        long_run: long_run(factor),
+        ahead: &ahead,
+    };
+    let response = chart.ui(ui);
     response.on_hover_text("Exact mean, and the quantiles 5, 25, 75 and 95 %, of the factor alone");
 }
 
@@ -82,34 +84,79 @@ fn range(ahead: &FactorAhead, factor: &RiskFactor) -> (f64, f64) {
     })
 }
 
-fn draw(painter: &Painter, frame: &Frame, palette: &Palette, ahead: &FactorAhead, factor: &RiskFactor) {
-    axes::ground(painter, frame, palette);
-    axes::left(painter, frame, palette, &level_ticks(frame), true);
-    axes::bottom(painter, frame, palette, &day_ticks(frame), true);
-    let inside = painter.with_clip_rect(frame.rect.intersect(painter.clip_rect()));
-    let days = || ahead.days.iter().map(|day| f64::from(*day));
-    let start = today(factor);
-    for (ends, weight) in [(&ahead.ninety, 0.2), (&ahead.half, 0.3)] {
-        let edges = days().zip(ends).map(|(day, ends)| [day, ends[0], ends[1]]);
-        let edges: Vec<[f64; 3]> = [[0.0, start, start]].into_iter().chain(edges).collect();
-        marks::band(&inside, frame, &edges, palette.neutral.gamma_multiply(weight));
+/// What is drawn: bands round the mean from today on, and the level that it is drawn to.
+struct Chart<'a> {
+    palette: &'a Palette,
+    across: Span,
+    up: Span,
+    today: f64,
+    long_run: Option<f64>,
+    ahead: &'a FactorAhead,
+}
+
+impl Chart<'_> {
+    fn ui(&self, ui: &mut Ui) -> Response {
+        let size = ui.available_size();
+        let day_ticks = ticks::days(self.across, ((size.x - LEFT_POINTS) / DAY_TICK_POINTS) as usize);
+        let level_step = ticks::step(self.up, (size.y / LEVEL_TICK_POINTS) as usize);
+        let decimals = ticks::decimals(level_step);
+        let level_ticks = ticks::along(self.up, level_step, 0.0, |level| grouped(level, decimals));
+        let (day_marks, level_marks) = (marks(&day_ticks), marks(&level_ticks));
+        let plot = Plot::new("factor ahead")
+            .width(size.x)
+            .height(size.y)
+            .allow_drag(false)
+            .allow_zoom(false)
+            .allow_scroll(false)
+            .allow_boxed_zoom(false)
+            .allow_double_click_reset(false)
+            .show_background(false)
+            .show_crosshair(false)
+            .grid_color(self.palette.grid)
+            .set_margin_fraction(Vec2::ZERO)
+            .y_axis_min_width(LEFT_POINTS)
+            .x_grid_spacer(move |_| day_marks.clone())
+            .y_grid_spacer(move |_| level_marks.clone())
+            .x_axis_formatter(move |mark, _| words(&day_ticks, mark))
+            .y_axis_formatter(move |mark, _| words(&level_ticks, mark))
+            .label_formatter(|_| None);
+        plot.show(ui, |plot| self.draw(plot)).response
     }
-    let mean = days().zip(&ahead.mean).map(|(day, mean)| [day, *mean]);
-    let mean: Vec<[f64; 2]> = [[0.0, start]].into_iter().chain(mean).collect();
-    marks::line(&inside, frame, &mean, Stroke::new(1.8, palette.neutral));
-    if let Some(level) = long_run(factor) {
-        marks::dashed_level(&inside, frame, level, Stroke::new(1.0, palette.ink));
-        let at = pos2(frame.rect.right() - 4.0, frame.y(level) - 1.0);
-        marks::label(&inside, frame.rect, at, Align2::RIGHT_BOTTOM, "long run", palette.ink, palette.panel);
+
+    fn draw(&self, plot: &mut PlotUi<'_>) {
+        let ((left, right), (bottom, top)) = (self.across.ends(), self.up.ends());
+        plot.set_plot_bounds(PlotBounds::from_min_max([left, bottom], [right, top]));
+        let from_today = |later: &mut dyn Iterator<Item = f64>| -> Vec<f64> {
+            [self.today].into_iter().chain(later).collect()
+        };
+        let days: Vec<f64> =
+            [0.0].into_iter().chain(self.ahead.days.iter().map(|day| f64::from(*day))).collect();
+        for (name, ends, weight) in [("90 %", &self.ahead.ninety, 0.2), ("50 %", &self.ahead.half, 0.3)] {
+            let low = from_today(&mut ends.iter().map(|ends| ends[0]));
+            let high = from_today(&mut ends.iter().map(|ends| ends[1]));
+            let fill = self.palette.neutral.gamma_multiply(weight);
+            plot.add(FilledArea::new(name, &days, &low, &high).fill_color(fill));
+        }
+        let mean = from_today(&mut self.ahead.mean.iter().copied());
+        let mean: Vec<[f64; 2]> = days.iter().zip(mean).map(|(day, level)| [*day, level]).collect();
+        plot.line(Line::new("mean", mean).color(self.palette.neutral).width(1.8));
+        if let Some(level) = self.long_run {
+            let line = HLine::new("long run", level).color(self.palette.ink).width(1.0);
+            plot.hline(line.style(LineStyle::dashed_dense()));
+            let words = RichText::new("long run").size(theme::SMALL_POINTS).color(self.palette.ink);
+            let at = PlotPoint::new(right, level);
+            plot.text(Text::new("long run", at, words).anchor(Align2::RIGHT_BOTTOM));
+        }
     }
 }
 
-fn level_ticks(frame: &Frame) -> Vec<Tick> {
-    let step = ticks::step(frame.up, (frame.rect.height() / 24.0) as usize);
-    let decimals = ticks::decimals(step);
-    ticks::along(frame.up, step, 0.0, |value| grouped(value, decimals))
+/// Grid lines at ticks, all of one weight.
+fn marks(ticks: &[Tick]) -> Vec<GridMark> {
+    let step_size = ticks.windows(2).map(|pair| pair[1].value - pair[0].value).next().unwrap_or(1.0);
+    ticks.iter().map(|tick| GridMark { value: tick.value, step_size }).collect()
 }
 
-fn day_ticks(frame: &Frame) -> Vec<Tick> {
-    ticks::days(frame.across, (frame.rect.width() / 56.0) as usize)
+fn words(ticks: &[Tick], mark: GridMark) -> String {
+    let tick = ticks.iter().find(|tick| tick.value == mark.value);
+    tick.map_or_else(String::new, |tick| tick.words.clone())
 }
