@@ -7,7 +7,7 @@ use ebbmark_engine::book::HalfLife;
 use ebbmark_engine::factors::{Diffusion, Model, RiskFactor};
 use ebbmark_engine::figures::grouped;
 use ebbmark_engine::measures::{FactorAhead, factor_ahead};
-use egui::{Align2, Id, Response, RichText, Ui, Vec2};
+use egui::{Align2, Id, Response, RichText, Ui, Vec2, vec2};
 use egui_plot::{FilledArea, GridMark, HLine, Line, LineStyle, Plot, PlotBounds, PlotPoint, PlotUi, Text};
 use std::sync::Arc;
 
@@ -15,9 +15,11 @@ use std::sync::Arc;
 const POINTS: u32 = 60;
 /// Room for the words of the left axis.
 const LEFT_POINTS: f32 = 50.0;
+/// Room for half of the last day's words.
+const RIGHT_POINTS: f32 = 12.0;
 /// Points between ticks, at least.
 const DAY_TICK_POINTS: f32 = 56.0;
-const LEVEL_TICK_POINTS: f32 = 28.0;
+const LEVEL_TICK_POINTS: f32 = 20.0;
 /// Smallest height worth a chart.
 const LEAST_HEIGHT: f32 = 80.0;
 
@@ -96,7 +98,8 @@ struct Chart<'a> {
 
 impl Chart<'_> {
     fn ui(&self, ui: &mut Ui) -> Response {
-        let size = ui.available_size();
+        // The words under the last day reach half their width beyond the chart.
+        let size = ui.available_size() - vec2(RIGHT_POINTS, 0.0);
         let day_ticks = ticks::days(self.across, ((size.x - LEFT_POINTS) / DAY_TICK_POINTS) as usize);
         let level_step = ticks::step(self.up, (size.y / LEVEL_TICK_POINTS) as usize);
         let decimals = ticks::decimals(level_step);
