@@ -109,7 +109,8 @@ impl Session {
             Figures::AtLine(at_line) => live.at_line = Some(at_line),
             Figures::Progress { paths, seconds } => (live.paths_done, live.seconds) = (paths, seconds),
             Figures::Finished { seconds } => {
-                live.paths_done = self.document.settings.paths;
+                live.paths_done =
+                    live.at_line.as_ref().and_then(|line| line.paths).unwrap_or(live.paths_done);
                 live.seconds = seconds;
                 live.state = RunState::Finished;
             }
