@@ -7,6 +7,7 @@ pub mod fonts;
 pub mod look;
 /// Figures as SVG: the only drawer for paper.
 pub mod svg;
+mod text;
 /// Figures as PNG.
 pub mod png;
 /// Numbers as CSV.
