@@ -13,8 +13,8 @@ const LOW_WORD: u64 = 0xFFFF_FFFF;
 
 /// Lane of the uniforms that place the highest and lowest value within a step; factor pairs have lanes 0, 1, 2, ...
 pub(super) const BRIDGE_LANE: u32 = 0x8000_0000;
-/// First of the lanes that subdivide the first day.
-pub(super) const FIRST_DAY_LANE: u32 = 0x8000_0001;
+/// First of the lanes that cut an early day into parts.
+pub(super) const PART_LANE: u32 = 0x8000_0001;
 
 /// Ten rounds on `L` counters at once. A word is the low half of its 64-bit lane; what stands above it is of no meaning.
 #[inline(always)]

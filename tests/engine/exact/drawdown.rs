@@ -81,3 +81,20 @@ fn exact_sampled_falls_of_a_brownian_book() {
         }
     }
 }
+
+/// The mean fall of a Brownian motion is `sqrt(pi/2) sigma sqrt(T)` from the first day on. Allowed: 0.5 % for the trips
+/// within a part of a day that are not seen, and four standard errors.
+#[test]
+fn exact_falls_of_the_first_days() {
+    let day_sd = 1.0 / DAYS_PER_YEAR.sqrt();
+    let book = model(vec![reverting_level(0.0, 0.0, 0.0, 1.0)], &[], vec![part(None, 0.0, &[(0, 1.0)])], 0.0);
+    let run = run_to(&book, 200_000, 3, &[1, 2, 3, 5, 8, 9], None);
+    for &day in run.kept_days() {
+        let falls = run.falls(day).unwrap();
+        let n = falls.len() as f64;
+        let mean = falls.iter().sum::<f64>() / n;
+        let sd = (falls.iter().map(|fall| (fall - mean).powi(2)).sum::<f64>() / n).sqrt();
+        let expected = (std::f64::consts::FRAC_PI_2 * f64::from(day)).sqrt() * day_sd;
+        near(mean, expected, 0.005 * expected + 4.0 * sd / n.sqrt());
+    }
+}
