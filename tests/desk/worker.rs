@@ -196,6 +196,22 @@ fn always_files_together_open_as_one_book() {
     assert_eq!(*driven.session.document(), document());
 }
 
+/// Only the book's currency is left to be said: the book is there, and figures of the one before are not shown as its.
+#[test]
+fn always_a_book_without_its_currency_is_opened_and_asked_for() {
+    let folder = Folder::new();
+    let positions = folder.write("two.csv", "name,quantity,price,currency\nA,1,1,EUR\nB,1,1,USD\n");
+    let factors = folder.write("f.csv", "factor,level,volatility\nA,,0.1\nB,,0.1\nUSD/EUR,0.9,0.08\n");
+    let mut driven = settled(session());
+    open(&mut driven, vec![positions, factors]);
+    driven.until("the question", |session| !session.faults().is_empty());
+    assert_eq!(driven.session.document().name, "two");
+    assert!(driven.session.live().at_line.is_none() && driven.session.live().model.is_none());
+    driven.apply(set(SettingChange::BookCurrency(Some("EUR".to_owned()))));
+    driven.until("its figures", is_settled);
+    assert_eq!(driven.session.live().model.as_ref().unwrap().value, 1.9);
+}
+
 #[test]
 fn always_a_correlation_alone_joins_the_book() {
     let folder = Folder::new();

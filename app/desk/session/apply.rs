@@ -2,7 +2,7 @@
 
 use super::edits;
 use super::undo::{State, Target};
-use super::{RunState, Session};
+use super::{Live, RunState, Session};
 use crate::desk::commands::{Command, ExportKind, PathPurpose, SettingChange, file_stem};
 use crate::desk::worker::{ExportRequest, LineRequest, Request};
 use crate::workspace::{BookOrder, Document, Kept, Settings, Tab, Theme, View, Workspace};
@@ -86,6 +86,11 @@ impl Session {
     pub(super) fn put(&mut self, document: Arc<Document>) -> Vec<Request> {
         let old = std::mem::replace(&mut self.document, document);
         let mut requests = Vec::new();
+        if is_other_book(&old, &self.document) {
+            // Another book's figures would not be from before an edit, but simply wrong.
+            self.live = Live::default();
+            requests.push(Request::Stop);
+        }
         if needs_run(&old, &self.document) {
             requests.push(self.run());
         } else if needs_reading(&old.settings, &self.document.settings) {
@@ -213,6 +218,12 @@ impl Session {
 enum Step {
     Back,
     Forth,
+}
+
+/// Whether two documents have no holding in common.
+fn is_other_book(old: &Document, new: &Document) -> bool {
+    let [old, new] = [old, new].map(|document| &document.inputs.holdings);
+    !old.is_empty() && !new.iter().any(|holding| old.iter().any(|other| other.name == holding.name))
 }
 
 /// Whether other paths are needed, and not only another reading of the same.
