@@ -11,7 +11,7 @@ use std::time::{Duration, Instant};
 
 const SIZE: [f32; 2] = [1400.0, 900.0];
 /// No test waits longer, even on a loaded machine.
-const LONGEST_WAIT: Duration = Duration::from_secs(60);
+const LONGEST_WAIT: Duration = Duration::from_secs(150);
 
 /// A hand on the window: it finds things by their labels, clicks, types and drags.
 pub(crate) struct Hand(pub(crate) Harness<'static, App>);

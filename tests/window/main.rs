@@ -52,7 +52,7 @@ fn main() -> Outcome<()> {
 
 /// Waits until `found` gives something.
 pub(crate) fn wait_for<T>(what: &str, mut found: impl FnMut() -> Option<T>) -> Outcome<T> {
-    const LONGEST: Duration = Duration::from_secs(60);
+    const LONGEST: Duration = Duration::from_secs(150);
     let began = Instant::now();
     loop {
         if let Some(found) = found() {
