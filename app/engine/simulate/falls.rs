@@ -10,8 +10,8 @@ use super::program::Program;
 use super::random::{BRIDGE_LANE, PART_LANE, uniforms};
 
 /// A part of a day is about this share of the time since today, or the whole day where that is less. Measured on a
-/// Brownian motion, the mean fall is then within 0.1 % of its law from the first day on; uncut it would be 24 % low there.
-const PARTS_SINCE_TODAY: u32 = 16;
+/// Brownian motion, the mean fall is then within 0.3 % of its law from the first day on; uncut it would be 24 % low there.
+const PARTS_SINCE_TODAY: u32 = 8;
 
 /// Running figures of sixteen paths.
 #[derive(Debug, Clone)]

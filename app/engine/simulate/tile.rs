@@ -114,8 +114,12 @@ impl<'a> Tile<'a> {
             let slope =
                 if self.program.factors[term.factor].is_log { worth } else { Lanes::splat(term.weight) };
             let before = self.scratch[term.factor];
-            self.scratch[term.factor] =
-                Lanes::each(|lane| rate.0[lane].mul_add(slope.0[lane], before.0[lane]));
+            // At home the rate is 1: adding alone gives the same digits.
+            self.scratch[term.factor] = if part.rate.is_some() {
+                Lanes::each(|lane| rate.0[lane].mul_add(slope.0[lane], before.0[lane]))
+            } else {
+                Lanes::each(|lane| slope.0[lane] + before.0[lane])
+            };
         }
         for lane in 0..LANES {
             self.value.0[lane] = rate.0[lane].mul_add(local.0[lane], self.value.0[lane]);
