@@ -16,7 +16,11 @@ use egui::vec2;
 use egui_kittest::Harness;
 use egui_kittest::kittest::Queryable;
 use std::path::PathBuf;
+use std::thread;
 use std::time::{Duration, Instant};
+
+/// A screen shows sixty frames a second.
+const BETWEEN_FRAMES: Duration = Duration::from_millis(16);
 
 fn main() {
     tell("example", || session_of(&[], None));
@@ -69,6 +73,7 @@ fn frames_of_a_run(window: &mut Harness<'static, App>) -> Vec<Duration> {
         let began = ThreadTime::now();
         window.step();
         frames.push(began.elapsed());
+        thread::sleep(BETWEEN_FRAMES);
     }
     frames
 }

@@ -99,10 +99,15 @@ impl Driven {
         let began = Instant::now();
         while !is_wished(&self.session) {
             assert!(began.elapsed() < LONGEST_WAIT, "waited in vain for {what}");
-            if let Some(answer) = self.worker.wait(Duration::from_millis(100)) {
-                let requests = self.session.take(answer);
-                self.ask(requests);
-            }
+            self.take_one();
+        }
+    }
+
+    /// Takes the next answer, waiting a moment for it.
+    pub(crate) fn take_one(&mut self) {
+        if let Some(answer) = self.worker.wait(Duration::from_millis(100)) {
+            let requests = self.session.take(answer);
+            self.ask(requests);
         }
     }
 

@@ -92,6 +92,23 @@ fn always_a_first_answer_in_closed_form_comes_before_the_paths() {
 }
 
 #[test]
+fn always_a_line_that_never_rests_keeps_nothing_waiting() {
+    let mut session = session();
+    session.apply(set(SettingChange::Paths(100_000)));
+    let mut driven = Driven::start(session);
+    for day in (1..=63).cycle().take(1_000_000) {
+        driven.apply(set(SettingChange::ReadingDay(day)));
+        driven.take_one();
+        let bands = driven.session.live().bands.as_ref();
+        if bands.is_some_and(|bands| !bands.is_closed_form && bands.days.len() == 63) {
+            assert_eq!(driven.session.live().state, RunState::Finished);
+            return;
+        }
+    }
+    panic!("the bands waited for the line");
+}
+
+#[test]
 fn always_an_edit_starts_a_run_and_answers_of_the_old_one_are_dropped() {
     let mut driven = settled(session());
     let old = driven.session.live().generation;

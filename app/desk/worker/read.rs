@@ -21,13 +21,15 @@ const DAYS_AT_A_TIME: usize = 8;
 
 /// Reads until the program closes.
 pub(super) fn serve(board: &Board, post: &Post) {
-    let mut reader = Reader { board, post, line: None, bands: None, told: None };
+    let mut reader = Reader { board, post, line: None, bands: None, told: None, was_line: false };
     while let Some((shown, task)) = board.wait_for(|state| reader.next(state)) {
+        let is_line = matches!(task, Task::Line(_));
         match task {
             Task::Line(line) => reader.read_line(&shown, line),
             Task::Bands(detail) => reader.read_bands(&shown, detail),
             Task::End(end) => reader.tell_end(&shown, end),
         }
+        reader.was_line = is_line;
         drop(shown);
         board.change(|state| state.is_being_read = false);
     }
@@ -60,6 +62,8 @@ struct Reader<'a> {
     bands: Option<(Source, Detail)>,
     /// Generation of the run whose end was told.
     told: Option<u64>,
+    /// Whether the last thing done was the line.
+    was_line: bool,
 }
 
 impl Source {
@@ -85,20 +89,26 @@ impl Reader<'_> {
         let shown = state.shown.as_ref()?;
         let now = Source::of(shown);
         let wanted = state.line.as_ref()?;
-        let has_line = self
-            .line
-            .as_ref()
-            .is_some_and(|(source, line)| line == wanted && source.serves(&now, READING_GROWTH));
-        let bands = self.bands.as_ref().filter(|(source, _)| source.serves(&now, BANDS_GROWTH));
-        let task = match (shown.end, bands) {
-            _ if !has_line => Task::Line(wanted.clone()),
-            (_, None) => Task::Bands(Detail::SomeDays),
-            (Some(end), _) if self.told != Some(now.generation) => Task::End(end),
-            (Some(_), Some((_, Detail::SomeDays))) => Task::Bands(Detail::AllDays),
+        let line = self.line.as_ref().filter(|(source, _)| source.serves(&now, READING_GROWTH));
+        let is_at_line = line.is_some_and(|(_, line)| line == wanted);
+        let task = match self.beside_line(shown.end, &now) {
+            Some(other) if is_at_line || (line.is_some() && self.was_line) => other,
+            _ if !is_at_line => Task::Line(wanted.clone()),
             _ => return None,
         };
         state.is_being_read = true;
         Some((shown.clone(), task))
+    }
+
+    /// What there is to do beside the line. The two take turns, so that a line that never rests keeps nothing waiting.
+    fn beside_line(&self, end: Option<End>, now: &Source) -> Option<Task> {
+        let bands = self.bands.as_ref().filter(|(source, _)| source.serves(now, BANDS_GROWTH));
+        match (end, bands) {
+            (_, None) => Some(Task::Bands(Detail::SomeDays)),
+            (Some(end), _) if self.told != Some(now.generation) => Some(Task::End(end)),
+            (Some(_), Some((_, Detail::SomeDays))) => Some(Task::Bands(Detail::AllDays)),
+            _ => None,
+        }
     }
 
     fn read_line(&mut self, shown: &Shown, line: LineRequest) {
