@@ -219,7 +219,7 @@ fn currency_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
                 settle(code.clone());
             }
         }
-        let field = CommittedText { name: "Book currency asked for", hint: "another", width: 60.0 };
+        let field = CommittedText { name: "Book currency asked for", hint: "another", width: 76.0 };
         if let Some(code) = field.ui(ui, "").1 {
             settle(code);
         }
