@@ -9,7 +9,7 @@ use super::elementary::{LANES, Lanes, exp, ln, normal_pair};
 use super::program::Program;
 use super::random::{BRIDGE_LANE, PART_LANE, uniforms};
 
-/// A part of a day is about this share of the time since today, or the whole day where that is less. Measured on a
+/// A day is cut so that a part of it is about one in so many of the time since today, or left whole. Measured on a
 /// Brownian motion, the mean fall is then within 0.3 % of its law from the first day on; uncut it would be 24 % low there.
 const PARTS_SINCE_TODAY: u32 = 8;
 
