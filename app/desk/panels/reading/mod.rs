@@ -28,7 +28,7 @@ pub fn reading_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
         section_ui(ui, "Limit and capital");
         settings::limit_ui(ui, session, queue, &money);
         limit_ui(ui, at_line.reading.limit.as_ref());
-        section_ui(ui, "Pull and dispersion");
+        section_ui(ui, "Expected change and dispersion");
         split_ui(ui, &money, &at_line.reading);
         section_ui(ui, "Check on the run");
         check_ui(ui, &money, &at_line.reading);
@@ -209,7 +209,7 @@ fn limit_ui(ui: &mut Ui, limit: Option<&LimitReading>) {
 fn split_ui(ui: &mut Ui, money: &Money<'_>, reading: &Reading) {
     let change = reading.moments.expected_change;
     let share = money.share(change, 0.0).map(|share| signed(change, share)).unwrap_or_default();
-    line_ui(ui, "Expected change", [&money.change(change, 0.0), &share, ""]);
+    line_ui(ui, "Pull", [&money.change(change, 0.0), &share, ""]);
     if let Some(sd) = reading.moments.sd.exact.or(reading.moments.sd.sampled) {
         let share = money.share(sd, 0.0).unwrap_or_default();
         line_ui(ui, "Dispersion", [&money.figure(sd, 0.0), &share, ""]);
@@ -222,7 +222,7 @@ fn check_ui(ui: &mut Ui, money: &Money<'_>, reading: &Reading) {
     moment_row_ui(ui, |ui, column| {
         ui.label(theme::soft(ui, ["", "exact", "sampled", "z"][column]));
     });
-    moment_ui(ui, "Expected value", &moments.mean, |value, error| money.figure(value, error));
+    moment_ui(ui, "Mean", &moments.mean, |value, error| money.figure(value, error));
     moment_ui(ui, "Std. deviation", &moments.sd, |value, error| money.figure(value, error));
     moment_ui(ui, "Skewness", &moments.skewness, |value, error| {
         grouped(value, decimals_for(if error > 0.0 { error } else { 0.001 }))
