@@ -44,7 +44,7 @@ impl FileKind {
         } else {
             let found = format!("the columns {}", table.header.join(", "));
             let expected = "positions (name, quantity, price), exposures (holding, factor, money, per), factors (factor), a \
-                            square correlation, or holidays (date)";
+                            square correlation, a history (date and a column per factor), or holidays (date)";
             let place = table.place(Some(table.header_line), None);
             Err(Fault { place, found, expected: expected.to_owned() })
         }

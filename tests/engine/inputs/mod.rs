@@ -5,6 +5,7 @@ mod cells;
 mod currencies;
 mod correlations;
 mod factors;
+mod history;
 mod holdings;
 mod sensitivities;
 
