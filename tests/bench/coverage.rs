@@ -34,6 +34,7 @@ fn model(diffusion: Diffusion, weight: f64, value: f64) -> Model {
         unit: LevelUnit::Points,
         diffusion,
         is_inverted: false,
+        origins: Origins::default(),
     };
     let terms = vec![Term { factor: 0, weight }];
     Model {

@@ -26,6 +26,7 @@ fn model() -> Model {
                 _ => Diffusion::RevertingLevel { volatility: 0.9, long_run: 2.0, half_life: HalfLife::None },
             },
             is_inverted: false,
+            origins: Origins::default(),
         })
         .collect();
     let part = |first: usize, rate: Option<CurrencyRate>| CurrencyPart {

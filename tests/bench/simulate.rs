@@ -3,7 +3,9 @@
 
 use criterion::{Criterion, criterion_group, criterion_main};
 use ebbmark_engine::book::{HalfLife, LevelUnit};
-use ebbmark_engine::factors::{Correlation, CurrencyPart, Diffusion, Model, RiskFactor, Term, Valuation};
+use ebbmark_engine::factors::{
+    Correlation, CurrencyPart, Diffusion, Model, Origins, RiskFactor, Term, Valuation,
+};
 use ebbmark_engine::measures::{Confidence, Conventions, LossFrom, first_reading, reading};
 use ebbmark_engine::simulate::{InstructionSet, Plan, Run, Unwatched, run, run_with};
 use rayon::prelude::*;
@@ -20,7 +22,14 @@ fn factor(number: usize, is_reverting: bool) -> RiskFactor {
         Diffusion::Geometric { drift: 0.0, volatility: 0.2 }
     };
     let name = format!("factor {number}");
-    RiskFactor { name, level: Some(100.0), unit: LevelUnit::Points, diffusion, is_inverted: false }
+    RiskFactor {
+        name,
+        level: Some(100.0),
+        unit: LevelUnit::Points,
+        diffusion,
+        is_inverted: false,
+        origins: Origins::default(),
+    }
 }
 
 fn book(n: usize, reverting: usize) -> Model {

@@ -5,7 +5,9 @@
 mod agree;
 mod always;
 mod exact;
+mod fit;
 mod inputs;
 mod law;
+mod matrices;
 mod support;
 mod table;

@@ -2,8 +2,9 @@
 
 use ebbmark_engine::book::{HalfLife, LevelUnit};
 use ebbmark_engine::factors::{
-    Correlation, CurrencyPart, CurrencyRate, Diffusion, Model, RiskFactor, Term, Valuation,
+    Correlation, CurrencyPart, CurrencyRate, Diffusion, Model, Origins, RiskFactor, Term, Valuation,
 };
+use ebbmark_engine::fit::{ObservedPath, Steps};
 use ebbmark_engine::measures::{Confidence, Conventions, LossFrom};
 use ebbmark_engine::simulate::{DaySample, Plan, Run, Unwatched, run};
 
@@ -60,6 +61,7 @@ fn factor(level: f64, diffusion: Diffusion) -> RiskFactor {
         unit: LevelUnit::Points,
         diffusion,
         is_inverted: false,
+        origins: Origins::default(),
     }
 }
 
@@ -134,4 +136,9 @@ pub(crate) fn from_today(confidences: &[&str]) -> Conventions {
         loss_from: LossFrom::Today,
         loss_limit: None,
     }
+}
+
+/// A path of the modelled variable with steps of whole units.
+pub(crate) fn path(values: &[f64], units: &[u32], years_per_unit: f64) -> ObservedPath {
+    ObservedPath { values: values.to_vec(), steps: Steps { units: units.to_vec(), years_per_unit } }
 }

@@ -14,14 +14,18 @@ fn pair(name: &str) -> Option<(&str, &str)> {
     name.split_once('/').filter(|(left, right)| is_code(left) && is_code(right))
 }
 
-/// The same pair the other way round.
-pub(super) fn inverse(rate: &str) -> Option<String> {
+/// The same pair the other way round, for the name of a currency rate.
+pub fn inverse_rate(rate: &str) -> Option<String> {
     pair(rate).map(|(left, right)| format!("{right}/{left}"))
 }
 
 /// The book's currency: the one set, else the only one named, provided that no row's is empty and no rate names
-/// another; none where no currency is named anywhere.
-pub(super) fn book_currency(inputs: &Inputs, settings: &ModelSettings) -> Result<Option<String>, Fault> {
+/// another; none where no currency is named anywhere. `columns` are the history's, rates among them.
+pub(super) fn book_currency(
+    inputs: &Inputs,
+    columns: &[String],
+    settings: &ModelSettings,
+) -> Result<Option<String>, Fault> {
     if let Some(code) = &settings.book_currency {
         let fault = || {
             ask(inputs, format!("book currency `{code}`"), "a code of three capital letters, like EUR".into())
@@ -29,8 +33,8 @@ pub(super) fn book_currency(inputs: &Inputs, settings: &ModelSettings) -> Result
         return if is_code(code) { Ok(Some(code.clone())) } else { Err(fault()) };
     }
     let of_rows = inputs.holdings.iter().filter_map(|holding| holding.currency.as_deref());
-    let of_rates =
-        inputs.factors.iter().filter_map(|row| pair(&row.name)).flat_map(|(left, right)| [left, right]);
+    let names = inputs.factors.iter().map(|row| &row.name).chain(columns);
+    let of_rates = names.filter_map(|name| pair(name)).flat_map(|(left, right)| [left, right]);
     let mut named: Vec<&str> = Vec::new();
     for code in of_rows.chain(of_rates) {
         if !named.contains(&code) {

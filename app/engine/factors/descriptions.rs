@@ -1,10 +1,10 @@
 //! What all rows together say about each factor, in order of first appearance, and who uses it and how.
 //! An empty cell describes nothing; two cells that differ are a fault naming both places.
 
-use super::currencies::inverse;
-use super::{FactorRow, Inputs};
+use super::currencies::inverse_rate;
+use super::{FactorRow, Fitted, Inputs};
 use crate::book::{Description, DiffusionKind, HalfLife, Holding, Kind, LevelUnit, Per, TypedFigure};
-use crate::tables::{Fault, Place};
+use crate::tables::{Fault, Notice, NoticeLevel, Place};
 
 /// A cell that says something, and where it stands.
 #[derive(Debug, Clone, PartialEq)]
@@ -32,6 +32,10 @@ pub(super) struct Described {
     pub(super) needs_level: bool,
     /// Whether it is described as the pair the other way round.
     pub(super) is_inverted: bool,
+    /// Whether its level is the last of the history.
+    pub(super) has_fitted_level: bool,
+    /// Rows whose price is another than that.
+    pub(super) notices: Vec<Notice>,
 }
 
 /// The factors of some inputs.
@@ -58,7 +62,11 @@ pub(super) fn rate_of(holding: &Holding, book_currency: Option<&str>) -> Option<
 
 /// Gathers what is said, in order of first appearance: for each holding its factor, then its currency's rate; then the
 /// factors of the sensitivities.
-pub(super) fn gather(inputs: &Inputs, book_currency: Option<&str>) -> (Vec<Described>, Vec<Fault>) {
+pub(super) fn gather(
+    inputs: &Inputs,
+    fitted: Option<&Fitted>,
+    book_currency: Option<&str>,
+) -> (Vec<Described>, Vec<Fault>) {
     let mut all = Descriptions { inputs, book_currency, factors: Vec::new(), faults: Vec::new() };
     for holding in &inputs.holdings {
         all.take_holding(holding);
@@ -73,6 +81,7 @@ pub(super) fn gather(inputs: &Inputs, book_currency: Option<&str>) -> (Vec<Descr
     for row in &inputs.factors {
         all.take_row(row, &rates);
     }
+    all.take_last_levels(fitted);
     all.take_prices();
     all.refuse_both_ways(&rates);
     (all.factors, all.faults)
@@ -113,7 +122,7 @@ impl Descriptions<'_> {
 
     fn take_row(&mut self, row: &FactorRow, rates: &[String]) {
         let file = self.inputs.files.factors.clone();
-        let inverted = inverse(&row.name).filter(|direct| rates.contains(direct));
+        let inverted = inverse_rate(&row.name).filter(|direct| rates.contains(direct));
         let name = inverted.as_ref().unwrap_or(&row.name).clone();
         let Some(factor) = self.factors.iter_mut().find(|factor| factor.name == name) else {
             return;
@@ -170,6 +179,18 @@ impl Descriptions<'_> {
         }
     }
 
+    /// A factor without a level in `factors.csv` has the last one of the history.
+    fn take_last_levels(&mut self, fitted: Option<&Fitted>) {
+        let Some(fitted) = fitted else { return };
+        for factor in self.factors.iter_mut().filter(|factor| factor.level.is_none()) {
+            let Some(known) = fitted.factor(&factor.name) else { continue };
+            let value = if factor.is_inverted { known.level.recip() } else { known.level };
+            let place = Place { file: fitted.label.clone(), line: None, column: Some(factor.name.clone()) };
+            factor.level = Some(Said { value, place });
+            factor.has_fitted_level = true;
+        }
+    }
+
     /// A factor without a level of its own has the price of the row named like it, else of its only row; `level` rows
     /// share their factor's level.
     fn take_prices(&mut self) {
@@ -180,6 +201,11 @@ impl Descriptions<'_> {
             let rows: Vec<&Holding> =
                 holdings.iter().filter(|holding| factor_of(holding) == Some(name.as_str())).collect();
             for row in rows.iter().filter(|row| row.kind == Kind::Level) {
+                let factor = self.factor(&name, Place::default());
+                if factor.has_fitted_level {
+                    factor.notices.extend(other_price(factor.level.as_ref(), row));
+                    continue;
+                }
                 let said = Said { value: row.price, place: self.place(&file, row.line, "price") };
                 self.say(&name, said, |factor| &mut factor.level);
             }
@@ -196,7 +222,7 @@ impl Descriptions<'_> {
         for direct in
             rates.iter().enumerate().filter(|(at, rate)| !rates[..*at].contains(rate)).map(|(_, rate)| rate)
         {
-            let Some(other) = inverse(direct) else { continue };
+            let Some(other) = inverse_rate(direct) else { continue };
             let row = |name: &str| self.inputs.factors.iter().find(|row| row.name == name);
             let held = self.factors.iter().find(|factor| factor.name == other);
             let place = match (row(&other), row(direct), held) {
@@ -211,6 +237,17 @@ impl Descriptions<'_> {
             });
         }
     }
+}
+
+/// A `level` row whose price is not the last level of the history.
+fn other_price(last: Option<&Said<f64>>, row: &Holding) -> Option<Notice> {
+    let last = last.filter(|last| last.value != row.price)?;
+    let text = format!(
+        "{}: its price {} is not the last level of the history, {}, which is taken as today's; give the level in \
+         factors.csv to keep another.",
+        row.name, row.price, last.value
+    );
+    Some(Notice { level: NoticeLevel::Warning, text })
 }
 
 /// How a cell reads in a fault, and when two cells say the same.

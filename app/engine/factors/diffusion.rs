@@ -1,10 +1,11 @@
 //! A risk factor and the diffusion it follows, with every parameter known and checked.
 
+use super::Origins;
 use crate::book::{DiffusionKind, HalfLife, LevelUnit};
-use serde::Serialize;
+use serde::{Deserialize, Serialize};
 
 /// A diffusion with its parameters. Rates and volatilities are per year.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
 pub enum Diffusion {
     /// `dS/S = drift dt + volatility dW`, so that `E[S_T] = S_0 exp(drift T)`.
     Geometric {
@@ -40,6 +41,37 @@ impl Diffusion {
             Self::Geometric { .. } => DiffusionKind::Geometric,
             Self::RevertingLog { .. } => DiffusionKind::RevertingLog,
             Self::RevertingLevel { .. } => DiffusionKind::RevertingLevel,
+        }
+    }
+
+    /// `drift` of a geometric diffusion; 0 for the others.
+    pub fn drift(&self) -> f64 {
+        match *self {
+            Self::Geometric { drift, .. } => drift,
+            _ => 0.0,
+        }
+    }
+
+    /// Long-run level and half-life; none for a geometric diffusion.
+    pub fn reversion(&self) -> Option<(f64, HalfLife)> {
+        match *self {
+            Self::Geometric { .. } => None,
+            Self::RevertingLog { long_run, half_life, .. }
+            | Self::RevertingLevel { long_run, half_life, .. } => Some((long_run, half_life)),
+        }
+    }
+
+    /// The same of one over the level: drift `sigma^2 - drift`, long run `1 / long_run`; none for a reverting level,
+    /// whose reciprocal is none.
+    pub fn inverted(&self) -> Option<Self> {
+        match *self {
+            Self::Geometric { drift, volatility } => {
+                Some(Self::Geometric { drift: volatility * volatility - drift, volatility })
+            }
+            Self::RevertingLog { volatility, long_run, half_life } => {
+                Some(Self::RevertingLog { volatility, long_run: 1.0 / long_run, half_life })
+            }
+            Self::RevertingLevel { .. } => None,
         }
     }
 
@@ -82,6 +114,8 @@ pub struct RiskFactor {
     pub diffusion: Diffusion,
     /// Whether it was described as the pair the other way round and is read inverted.
     pub is_inverted: bool,
+    /// Where each figure came from.
+    pub origins: Origins,
 }
 
 impl RiskFactor {

@@ -9,6 +9,8 @@ pub mod read_factors;
 pub mod read_correlation;
 /// A risk factor and its diffusion.
 pub mod diffusion;
+/// What a history gives for what nobody typed.
+pub mod fitted;
 /// A valid correlation matrix.
 pub mod correlation;
 /// The book's value as a function of the factors' moves.
@@ -22,9 +24,11 @@ mod parts;
 mod pairing;
 
 pub use correlation::{Correlation, CorrelationError};
+pub use currencies::inverse_rate;
 pub use diffusion::{Diffusion, RiskFactor};
+pub use fitted::{Fitted, FittedFactor, Origin, Origins, TypedFactor};
 pub use inputs::{CorrelationTable, FactorRow, FileLabels, Inputs};
-pub use model::{Model, ModelHolding, ModelSettings};
+pub use model::{Model, ModelHolding, ModelSettings, typed_factors};
 pub use read_correlation::read_correlation;
 pub use read_factors::read_factors;
 pub use valuation::{CurrencyPart, CurrencyRate, Term, Valuation};

@@ -2,7 +2,7 @@
 
 use super::descriptions::{self, Described};
 use super::parts::{self, Pricing};
-use super::{Correlation, CurrencyPart, Inputs, RiskFactor, Valuation};
+use super::{Correlation, CurrencyPart, Fitted, Inputs, RiskFactor, TypedFactor, Valuation};
 use super::{currencies, pairing, resolution};
 use crate::tables::{Fault, Faults, Notice, NoticeLevel, Place};
 
@@ -59,13 +59,29 @@ impl Model {
     /// # Errors
     /// Every fault found; those of the correlation only where the factors stand.
     pub fn assemble(inputs: &Inputs, settings: &ModelSettings) -> Result<Self, Faults> {
+        Self::assemble_fitted(inputs, None, settings)
+    }
+
+    /// [`Model::assemble`] with a history's figures for what nobody typed, parameter by parameter.
+    ///
+    /// # Errors
+    /// As [`Model::assemble`].
+    pub fn assemble_fitted(
+        inputs: &Inputs,
+        fitted: Option<&Fitted>,
+        settings: &ModelSettings,
+    ) -> Result<Self, Faults> {
         check_settings(inputs, settings)?;
-        let currency = currencies::book_currency(inputs, settings).map_err(|fault| Faults(vec![fault]))?;
-        let (described, mut faults) = descriptions::gather(inputs, currency.as_deref());
+        let columns = fitted.map_or([].as_slice(), |fitted| &fitted.columns);
+        let currency =
+            currencies::book_currency(inputs, columns, settings).map_err(|fault| Faults(vec![fault]))?;
+        let (described, mut faults) = descriptions::gather(inputs, fitted, currency.as_deref());
         let mut notices: Vec<Notice> = described.iter().filter_map(inversion).collect();
+        notices.extend(described.iter().flat_map(|said| said.notices.iter().cloned()));
         let mut factors = Vec::with_capacity(described.len());
         for said in &described {
-            match resolution::resolve(said, &mut notices) {
+            let known = fitted.and_then(|fitted| fitted.factor(&said.name));
+            match resolution::resolve(said, known, &mut notices) {
                 Ok(factor) => factors.push(factor),
                 Err(more) => faults.extend(more),
             }
@@ -74,7 +90,7 @@ impl Model {
             return Err(Faults(faults));
         }
         let pricing = Pricing { inputs, factors: &factors, book_currency: currency.as_deref() };
-        let correlation = pairing::pair_up(inputs, &factors, &mut notices);
+        let correlation = pairing::pair_up(inputs, fitted, &factors, &mut notices);
         let (holdings, correlation) = match (pricing.holdings(), correlation) {
             (Ok(holdings), Ok(correlation)) => (holdings, correlation),
             (holdings, correlation) => {
@@ -97,6 +113,27 @@ impl Model {
     }
 }
 
+/// The book's currency and its factors in their order, with what a fit has to leave alone. `columns` are the names of the
+/// history's columns. What is wrong with the inputs is not told here: the model does that.
+///
+/// # Errors
+/// The fault of a currency that has to be named.
+pub fn typed_factors(
+    inputs: &Inputs,
+    columns: &[String],
+    settings: &ModelSettings,
+) -> Result<Vec<TypedFactor>, Faults> {
+    let currency =
+        currencies::book_currency(inputs, columns, settings).map_err(|fault| Faults(vec![fault]))?;
+    let (described, _) = descriptions::gather(inputs, None, currency.as_deref());
+    let typed = described.into_iter().map(|said| TypedFactor {
+        diffusion: resolution::typed_kind(&said),
+        half_life: said.half_life.map(|said| said.value),
+        name: said.name,
+    });
+    Ok(typed.collect())
+}
+
 fn check_settings(inputs: &Inputs, settings: &ModelSettings) -> Result<(), Faults> {
     let fault = |found: String, expected: &str| {
         let place = Place { file: inputs.files.positions.clone(), line: None, column: None };
@@ -112,7 +149,7 @@ fn check_settings(inputs: &Inputs, settings: &ModelSettings) -> Result<(), Fault
 }
 
 fn inversion(said: &Described) -> Option<Notice> {
-    let given = currencies::inverse(&said.name).filter(|_| said.is_inverted)?;
+    let given = currencies::inverse_rate(&said.name).filter(|_| said.is_inverted)?;
     let text = format!(
         "{given} is read inverted, as {}: level, drift, long run and correlations are turned.",
         said.name

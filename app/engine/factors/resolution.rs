@@ -2,7 +2,7 @@
 //! other way round are turned here.
 
 use super::descriptions::{Described, Said};
-use super::{Diffusion, RiskFactor};
+use super::{Diffusion, FittedFactor, Origin, Origins, RiskFactor};
 use crate::book::{DiffusionKind, HalfLife, TypedFigure};
 use crate::tables::{Fault, Notice, NoticeLevel, Place};
 
@@ -13,21 +13,37 @@ const LARGEST_BARE_VOLATILITY: f64 = 5.0;
 struct Resolving<'a> {
     said: &'a Described,
     kind: DiffusionKind,
+    /// The history's diffusion of that kind.
+    fitted: Option<Diffusion>,
+    origins: Origins,
     faults: Vec<Fault>,
 }
 
-/// The factor that a description amounts to.
-pub(super) fn resolve(said: &Described, notices: &mut Vec<Notice>) -> Result<RiskFactor, Vec<Fault>> {
-    let default = if said.has_level_row { DiffusionKind::RevertingLevel } else { DiffusionKind::Geometric };
-    let kind = said.diffusion.as_ref().map_or(default, |said| said.value);
-    let mut resolving = Resolving { said, kind, faults: Vec::new() };
+/// The factor that a description amounts to, with a history's figures where it says nothing.
+pub(super) fn resolve(
+    said: &Described,
+    fitted: Option<&FittedFactor>,
+    notices: &mut Vec<Notice>,
+) -> Result<RiskFactor, Vec<Fault>> {
+    let chosen = fitted.and_then(|fitted| fitted.diffusion).and_then(|diffusion| {
+        // What is written the other way round is resolved the way it is written, and turned as a whole.
+        if said.is_inverted { diffusion.inverted() } else { Some(diffusion) }
+    });
+    let kind = typed_kind(said).or(chosen.map(|chosen| chosen.kind())).unwrap_or(usual_kind(said));
+    let fitted = chosen.filter(|chosen| chosen.kind() == kind);
+    let mut resolving = Resolving { said, kind, fitted, origins: Origins::default(), faults: Vec::new() };
     let level = resolving.level();
     let volatility = resolving.volatility();
-    let drift = resolving.plain(&said.drift).unwrap_or(0.0);
+    let drift = resolving.drift();
     let reversion = if kind == DiffusionKind::Geometric { None } else { resolving.reversion(level) };
     resolving.refuse_inverted_level();
     let (Some(volatility), true) = (volatility, resolving.faults.is_empty()) else {
         return Err(resolving.faults);
+    };
+    resolving.origins.diffusion = match (typed_kind(said), fitted) {
+        (Some(_), _) => Origin::Typed,
+        (None, Some(_)) => Origin::Fitted,
+        (None, None) => Origin::Usual,
     };
     let (long_run, half_life) = reversion.unwrap_or((level.unwrap_or(1.0), HalfLife::None));
     let diffusion = match kind {
@@ -36,23 +52,29 @@ pub(super) fn resolve(said: &Described, notices: &mut Vec<Notice>) -> Result<Ris
         DiffusionKind::RevertingLevel => Diffusion::RevertingLevel { volatility, long_run, half_life },
     };
     let unit = said.unit.as_ref().map_or_else(Default::default, |said| said.value);
-    let factor =
-        RiskFactor { name: said.name.clone(), level, unit, diffusion, is_inverted: said.is_inverted };
+    let (name, is_inverted, origins) = (said.name.clone(), said.is_inverted, resolving.origins);
+    let factor = RiskFactor { name, level, unit, diffusion, is_inverted, origins };
     notices.extend(unused(said, kind));
     Ok(if said.is_inverted { turned(factor) } else { factor })
 }
 
-/// The rate the other way round: level and long run become their reciprocals, the drift `sigma^2 - drift`.
+/// The diffusion typed; where only its parameters are, the usual one, which they were written for.
+pub(super) fn typed_kind(said: &Described) -> Option<DiffusionKind> {
+    let is_described = said.drift.is_some()
+        || said.volatility.is_some()
+        || said.long_run.is_some()
+        || said.half_life.is_some();
+    said.diffusion.as_ref().map(|said| said.value).or(is_described.then(|| usual_kind(said)))
+}
+
+/// Geometric, or a reverting level where a `level` row uses the factor.
+fn usual_kind(said: &Described) -> DiffusionKind {
+    if said.has_level_row { DiffusionKind::RevertingLevel } else { DiffusionKind::Geometric }
+}
+
+/// The rate the other way round, its level one over.
 fn turned(factor: RiskFactor) -> RiskFactor {
-    let diffusion = match factor.diffusion {
-        Diffusion::Geometric { drift, volatility } => {
-            Diffusion::Geometric { drift: volatility * volatility - drift, volatility }
-        }
-        Diffusion::RevertingLog { volatility, long_run, half_life } => {
-            Diffusion::RevertingLog { volatility, long_run: 1.0 / long_run, half_life }
-        }
-        level => level,
-    };
+    let diffusion = factor.diffusion.inverted().unwrap_or(factor.diffusion);
     RiskFactor { level: factor.level.map(f64::recip), diffusion, ..factor }
 }
 
@@ -93,7 +115,11 @@ impl Resolving<'_> {
                 self.fault(said.place.clone(), format!("`{}`", said.value), expected);
                 None
             }
-            Some(said) => Some(said.value),
+            Some(said) => {
+                let is_fitted = self.said.has_fitted_level;
+                self.origins.level = if is_fitted { Origin::Fitted } else { Origin::Typed };
+                Some(said.value)
+            }
             None => {
                 if is_needed {
                     self.missing("level", "its level today: give it in factors.csv");
@@ -105,9 +131,14 @@ impl Resolving<'_> {
 
     fn volatility(&mut self) -> Option<f64> {
         let Some(said) = &self.said.volatility else {
-            self.missing("volatility", "its volatility a year: type it in its row or in factors.csv");
-            return None;
+            let fitted = self.fitted.map(|fitted| fitted.volatility());
+            if fitted.is_none() {
+                self.missing("volatility", "its volatility a year: type it, or give a history to fit it to");
+            }
+            self.origins.volatility = Origin::Fitted;
+            return fitted;
         };
+        self.origins.volatility = Origin::Typed;
         let TypedFigure { value, has_percent_sign } = said.value;
         if !(value.is_finite() && value >= 0.0) {
             self.fault(said.place.clone(), format!("`{value}`"), "a volatility of 0 or more");
@@ -123,6 +154,17 @@ impl Resolving<'_> {
             return None;
         }
         self.without_percent(said)
+    }
+
+    fn drift(&mut self) -> f64 {
+        let fitted = self.fitted.map_or(0.0, |fitted| fitted.drift());
+        match &self.said.drift {
+            Some(_) => self.origins.drift = Origin::Typed,
+            None if fitted != 0.0 => self.origins.drift = Origin::Fitted,
+            None => {}
+        }
+        let said = self.said;
+        self.plain(&said.drift).unwrap_or(fitted)
     }
 
     /// A figure in the factor's own units takes no `%` where the level itself is modelled.
@@ -150,13 +192,19 @@ impl Resolving<'_> {
     }
 
     fn reversion(&mut self, level: Option<f64>) -> Option<(f64, HalfLife)> {
-        let half_life = match &self.said.half_life {
-            None => {
-                let what = "its half-life in trading days, or none: type it in its row or in factors.csv";
+        let fitted = self.fitted.and_then(|fitted| fitted.reversion());
+        self.origins.half_life = Origin::Typed;
+        let half_life = match (&self.said.half_life, fitted) {
+            (None, Some((_, half_life))) => {
+                self.origins.half_life = Origin::Fitted;
+                Some(half_life)
+            }
+            (None, None) => {
+                let what = "its half-life in trading days, or none: type it, or give a history to fit it to";
                 self.missing("half_life_days", what);
                 None
             }
-            Some(said) => match said.value {
+            (Some(said), _) => match said.value {
                 HalfLife::Days(days) if !(days > 0.0 && days.is_finite()) => {
                     self.fault(said.place.clone(), format!("`{days}`"), "trading days above 0, or none");
                     None
@@ -168,11 +216,13 @@ impl Resolving<'_> {
             return level.map(|level| (level, HalfLife::None));
         }
         let Some(said) = &self.said.long_run else {
-            if half_life.is_some() {
-                self.missing("long_run", "the level it is drawn to: type it in its row or in factors.csv");
+            if half_life.is_some() && fitted.is_none() {
+                self.missing("long_run", "the level it is drawn to: type it, or give a history to fit it to");
             }
-            return None;
+            self.origins.long_run = Origin::Fitted;
+            return Some((fitted?.0, half_life?));
         };
+        self.origins.long_run = Origin::Typed;
         let long_run = self.without_percent(said)?;
         if self.is_log() && long_run <= 0.0 {
             self.fault(

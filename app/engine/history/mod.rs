@@ -9,7 +9,10 @@ pub mod prices;
 pub mod read_history;
 /// How much time lies between the rows of a history.
 pub mod spacing;
+/// What looks odd in a history.
+pub mod blemishes;
 
+pub use blemishes::{Blemish, blemishes};
 pub use calendar::{date_after, read_holidays};
 pub use prices::{History, Series};
 pub use read_history::read_history;

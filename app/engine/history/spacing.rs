@@ -30,6 +30,15 @@ impl Spacing {
         }
     }
 
+    /// Trading days that a row stands for; none where time is that of the calendar.
+    pub fn row_days(self) -> Option<u32> {
+        match self {
+            Self::TradingDay => Some(1),
+            Self::TradingDays(days) => Some(days),
+            Self::CalendarDays => None,
+        }
+    }
+
     /// Time from one row to a later one: rows in a daily history, so that a gap in a column counts as the rows it spans;
     /// else calendar days. 0 for rows in any other order.
     pub fn units_between(self, history: &History, earlier: usize, later: usize) -> u32 {

@@ -4,6 +4,12 @@
 pub mod eigen;
 /// Cholesky factor of a semi-definite matrix.
 pub mod cholesky;
+/// Products of columns.
+pub mod gram;
+/// The nearest correlation matrix.
+pub mod nearest_correlation;
+/// Covariances drawn towards a target.
+pub mod shrinkage;
 /// Largest fall of a Brownian motion.
 pub mod drawdown_law;
 /// What one entry of a correlation matrix may be.
@@ -18,6 +24,8 @@ pub mod multidual;
 pub mod rank_range;
 /// Roots of functions of one variable.
 pub mod roots;
+/// Where a function of one variable is largest.
+pub mod maximum;
 /// Shifted lognormal law by its moments.
 pub mod shifted_lognormal;
 /// Normal law and decay integral.
@@ -26,12 +34,17 @@ pub mod special;
 pub mod tail;
 
 pub use drawdown_law::{drawdown_cdf, drawdown_mean_beyond, drawdown_quantile};
+pub use eigen::symmetric_eigenvalues;
 pub use entry_range::entry_range;
-pub use estimate::Estimate;
+pub use estimate::{Estimate, RangedEstimate};
+pub use gram::gram;
+pub use maximum::maximum;
 pub use moments::{SampleMoments, sample_moments};
 pub use multidual::Multidual;
+pub use nearest_correlation::{Nearest, NearestError, nearest_correlation};
 pub use rank_range::{RankRange, rank_range};
 pub use roots::root;
 pub use shifted_lognormal::ShiftedLognormal;
+pub use shrinkage::{Shrunk, shrink_to_constant_correlation, shrink_to_identity};
 pub use special::{decay_integral, normal_cdf, normal_density, normal_quantile};
 pub use tail::{TWO_SIDED_95, UpperTail};

@@ -16,6 +16,8 @@ pub mod density;
 pub mod first;
 /// A single factor ahead.
 pub mod factor_ahead;
+/// What a history's own errors make of the figures.
+pub mod parameter_range;
 
 pub use bands::{Bands, FALL_PERCENTS, VALUE_PERCENTS, bands};
 pub use confidence::{Confidence, ConfidenceError};
@@ -23,5 +25,6 @@ pub use density::{Density, density};
 pub use exact::{ExactMoments, exact_moments};
 pub use factor_ahead::{FactorAhead, factor_ahead};
 pub use first::{first_bands, first_densities, first_reading};
+pub use parameter_range::{ParameterRange, RangeRequest, RangeWatcher, parameter_range};
 pub use read::reading;
 pub use reading::{Conventions, LossFrom, Reading};

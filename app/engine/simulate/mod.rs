@@ -3,6 +3,8 @@
 mod block;
 mod elementary;
 mod falls;
+/// One horizon in a single step.
+pub mod one_step;
 /// What is to be run.
 pub mod plan;
 mod program;
@@ -16,6 +18,7 @@ pub mod transition;
 mod triangle;
 
 pub use block::InstructionSet;
+pub use one_step::values_in_one_step;
 pub use plan::{Plan, SimulateError};
 pub use random::Stream;
 pub use run::{DaySample, Run, Unwatched, Watcher, draw_again, run, run_with};

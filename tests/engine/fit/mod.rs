@@ -1,0 +1,6 @@
+//! Fits: against worked examples and other programs' figures, and what is refused.
+
+mod evidence;
+mod geometric;
+mod refusals;
+mod reverting;
