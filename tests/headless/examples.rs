@@ -1,11 +1,15 @@
-//! The example portfolios: each opens, the small one has the figures of its note, the wide one is what its program
-//! writes, byte for byte.
+//! The example portfolios: each opens, the small one has the figures of its note, the wide one and all histories are what
+//! their programs write, byte for byte.
 
 use super::support::{call, read_json, without_seconds};
 
 #[allow(dead_code, reason = "its main writes the files that are compared here")]
 #[path = "../../example-portfolios/wide-book/invent.rs"]
 mod invent;
+
+#[allow(dead_code, reason = "its main writes the files that are compared here")]
+#[path = "../../example-portfolios/invent-histories.rs"]
+mod invent_histories;
 
 const MIXED: [&str; 14] = [
     "--positions",
@@ -67,6 +71,19 @@ fn exact_wide_book_is_what_its_program_writes() {
         assert!(
             std::fs::read_to_string(&path).unwrap() == content,
             "{name} differs: run the example that writes it"
+        );
+    }
+}
+
+#[test]
+fn exact_histories_are_what_their_program_writes() {
+    let files = invent_histories::files().unwrap();
+    assert_eq!(files.len(), 3);
+    for (folder, content) in files {
+        let path = format!("{}/example-portfolios/{folder}/history.csv", env!("CARGO_MANIFEST_DIR"));
+        assert!(
+            std::fs::read_to_string(&path).unwrap() == content,
+            "{folder} differs: run the example that writes it"
         );
     }
 }
