@@ -3,7 +3,7 @@
 
 use clap::Parser;
 use ebbmark::desk;
-use ebbmark::headless::{Arguments, Command, Failure, read, streams};
+use ebbmark::headless::{Arguments, Command, Failure, fit, read, streams};
 use std::any::Any;
 use std::panic::{self, AssertUnwindSafe, PanicHookInfo};
 use std::path::PathBuf;
@@ -40,7 +40,7 @@ fn open(files: &[PathBuf]) -> Result<(), Failure> {
 fn obey(command: &Command) -> Result<(), Failure> {
     let (what, instead) = match command {
         Command::Read(arguments) => return read::read(arguments),
-        Command::Fit(_) => ("ebbmark fit", "Give each factor's diffusion in positions.csv or factors.csv."),
+        Command::Fit(arguments) => return fit::fit(arguments),
         Command::Stress(_) => {
             ("ebbmark stress", "Read the book with other volatilities or levels in its files.")
         }

@@ -44,7 +44,7 @@ pub fn subject<'a>(
         book: &document.name,
         model,
         base: settings.percent_base(model.value),
-        as_of: settings.as_of,
+        as_of: document.as_of(),
         date: document.date_of(at_line.day),
         has_holidays: document.holidays.is_some(),
         bands,

@@ -125,6 +125,7 @@ fn example() -> Opened {
         document: Document {
             name: String::new(),
             inputs: Arc::default(),
+            history: None,
             holidays: None,
             settings: Settings::usual(),
         },

@@ -1,5 +1,6 @@
 //! The answer of `ebbmark read`, field by field in the order of the README. Serialises itself; computes nothing.
 
+use ebbmark_engine::measures::ParameterRange;
 use ebbmark_engine::measures::reading::{DrawdownReading, LimitReading, LossRow, MomentsReading};
 use ebbmark_engine::tables::Notice;
 use jiff::civil::Date;
@@ -18,8 +19,8 @@ pub struct Answer {
     pub moments: MomentsReading,
     /// One row a confidence, ascending.
     pub loss: Vec<LossRow>,
-    /// Ranges from a fit's errors; none without a fit.
-    pub parameter_range: Option<Unavailable>,
+    /// Range that the fit's own errors leave; none where it was not asked for.
+    pub parameter_range: Option<ParameterRange>,
     /// Largest fall from a running peak.
     pub drawdown: DrawdownReading,
     /// With a loss limit.

@@ -25,8 +25,9 @@ pub enum Command {
     /// Print the loss table, drawdowns and moments of a book at one horizon
     #[command(after_help = CAUTION)]
     Read(Box<ReadArguments>),
-    /// Fit diffusions and correlation to a history (not yet)
-    Fit(NotYet),
+    /// Fit diffusions and correlation to a history, with errors and evidence
+    #[command(after_help = CAUTION)]
+    Fit(Box<CommandFitArguments>),
     /// Read a book under stresses, beside the base (not yet)
     Stress(NotYet),
     /// Hold past forecasts against what happened (not yet)
@@ -53,12 +54,41 @@ pub struct ReadArguments {
     /// How it is read; what is not given is the workspace's, else the default
     #[command(flatten)]
     pub settings: SettingArguments,
+    /// How its history is fitted
+    #[command(flatten)]
+    pub fit: FitArguments,
+    /// Add the range of VaR and ES over the fit's 95 % parameter range, from 200 simulated histories fitted again
+    #[arg(long, help_heading = "Fit (with a history)")]
+    pub parameter_range: bool,
     /// How the run is made and the answer printed
     #[command(flatten)]
     pub output: OutputArguments,
     /// Options that later versions honour
     #[command(flatten)]
     pub later: LaterArguments,
+}
+
+/// `ebbmark fit`.
+#[derive(Debug, Default, Args)]
+pub struct CommandFitArguments {
+    /// Which history, and the book whose typed diffusions stand above the choice
+    #[command(flatten)]
+    pub source: SourceArguments,
+    /// How it is fitted; what is not given is the workspace's, else the default
+    #[command(flatten)]
+    pub fit: FitArguments,
+    /// Trading days in a year, by which days become years [default: 252]
+    #[arg(long, value_name = "N", value_parser = parse_positive, help_heading = "Fit (with a history)")]
+    pub days_per_year: Option<f64>,
+    /// Currency that the book is valued in, an ISO 4217 code such as EUR
+    #[arg(long, value_name = "CUR", value_parser = parse_currency, help_heading = "Fit (with a history)")]
+    pub book_currency: Option<String>,
+    /// Print one JSON object instead of a table
+    #[arg(long, help_heading = "Output")]
+    pub json: bool,
+    /// No notices on standard error; errors still
+    #[arg(long, help_heading = "Output")]
+    pub quiet: bool,
 }
 
 /// The files of a book, by role.
@@ -78,6 +108,9 @@ pub struct SourceArguments {
     /// Correlations of the factors' Brownian motions
     #[arg(long, value_name = "FILE", requires = "positions")]
     pub correlation: Option<PathBuf>,
+    /// Levels of the factors by date: fits what the other files leave open
+    #[arg(long, value_name = "FILE", conflicts_with = "workspace")]
+    pub history: Option<PathBuf>,
     /// Days without trading; trading days are weekdays without it
     #[arg(long, value_name = "FILE", requires = "positions")]
     pub holidays: Option<PathBuf>,
@@ -140,13 +173,44 @@ pub struct OutputArguments {
     pub quiet: bool,
 }
 
+/// How a history is fitted.
+#[derive(Debug, Default, Args)]
+#[command(next_help_heading = "Fit (with a history)")]
+pub struct FitArguments {
+    /// First date of the history used, YYYY-MM-DD [default: its first]
+    #[arg(long, value_name = "DATE", value_parser = parse_date)]
+    pub since: Option<Date>,
+    /// Last date of the history used, YYYY-MM-DD [default: its last]
+    #[arg(long, value_name = "DATE", value_parser = parse_date)]
+    pub until: Option<Date>,
+    /// Trading days from one row to the next, such as 21 for months or 63 for quarters [default: 1 where the median gap is
+    /// at most four calendar days, else by the calendar]
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u32).range(1..=10_000))]
+    pub row_days: Option<u32>,
+    /// Diffusions to choose from: one of the log models, or reverting-level [default: by the evidence]
+    #[arg(long, value_name = "MODEL")]
+    pub model: Option<ModelName>,
+    /// Drift that a geometric factor takes where none is typed, per year [default: zero]
+    #[arg(long, value_name = "DRIFT")]
+    pub drift: Option<DriftName>,
+    /// Estimator of the correlation [default: sample]
+    #[arg(long, value_name = "NAME")]
+    pub estimator: Option<EstimatorName>,
+    /// Half-life of the weights of `--estimator weighted`, in trading days [default: 63]
+    #[arg(long, value_name = "DAYS", value_parser = parse_positive)]
+    pub weight_half_life: Option<f64>,
+    /// Rows that a change spans for the correlation, overlapping: 1, 5 or 10 [default: 1]
+    #[arg(long, value_name = "ROWS", value_parser = parse_change_days)]
+    pub change_days: Option<u32>,
+    /// What to do with missing values: dates that all factors have, or for each pair those that both have [default: common]
+    #[arg(long, value_name = "HOW")]
+    pub missing: Option<MissingName>,
+}
+
 /// Options that this version does not honour yet: each is answered with "not yet".
 #[derive(Debug, Default, Args)]
 #[command(next_help_heading = "Not yet")]
 pub struct LaterArguments {
-    /// Dated levels of the factors
-    #[arg(long, value_name = "FILE")]
-    pub history: Option<String>,
     /// Limits to hold the figures against
     #[arg(long, value_name = "FILE")]
     pub limits: Option<String>,
@@ -156,36 +220,46 @@ pub struct LaterArguments {
     /// Read the book absolute, relative to the other, or as the surplus over it
     #[arg(long, value_name = "HOW")]
     pub read_as: Option<String>,
-    /// Ranges from the fit's errors
-    #[arg(long, value_name = "DRAWS", num_args = 0..=1, default_missing_value = "")]
-    pub parameter_range: Option<String>,
-    /// Estimator of the correlation
-    #[arg(long, value_name = "NAME")]
-    pub estimator: Option<String>,
-    /// Half-life of the estimator's weights, in trading days
-    #[arg(long, value_name = "DAYS")]
-    pub weight_half_life: Option<String>,
-    /// Trading days that a return spans
-    #[arg(long, value_name = "DAYS")]
-    pub change_days: Option<String>,
-    /// First date of the history used
-    #[arg(long, value_name = "DATE")]
-    pub since: Option<String>,
-    /// Last date of the history used
-    #[arg(long, value_name = "DATE")]
-    pub until: Option<String>,
-    /// Trading days between two rows of the history
-    #[arg(long, value_name = "N")]
-    pub row_days: Option<String>,
-    /// Diffusion of all factors
-    #[arg(long, value_name = "NAME")]
-    pub model: Option<String>,
-    /// What to do with missing values of the history
-    #[arg(long, value_name = "HOW")]
-    pub missing: Option<String>,
-    /// Drift that a fit gives
-    #[arg(long, value_name = "HOW")]
-    pub drift: Option<String>,
+}
+
+/// Diffusions to choose from, as they are typed.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum ModelName {
+    /// A log model for all
+    Log,
+    /// reverting-level for all
+    Level,
+}
+
+/// Drift of the fit, as it is typed.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum DriftName {
+    /// None
+    Zero,
+    /// The fitted one
+    Fitted,
+}
+
+/// Estimator, as it is typed.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum EstimatorName {
+    /// Every change counts the same
+    Sample,
+    /// Recent changes count more, no mean removed
+    Weighted,
+    /// Shrunk towards equal variances without correlation
+    ShrunkIdentity,
+    /// Shrunk towards one correlation for all pairs
+    ShrunkConstant,
+}
+
+/// Missing values, as they are treated.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum MissingName {
+    /// Dates that all factors have
+    Common,
+    /// For each pair the dates that both have
+    Pairs,
 }
 
 /// What a loss is counted from, as it is typed.
@@ -197,26 +271,29 @@ pub enum LossFromName {
     Mean,
 }
 
+impl FitArguments {
+    /// The first of them that was given, as it is typed.
+    pub fn first_given(&self) -> Option<&'static str> {
+        let given = [
+            ("--since", self.since.is_some()),
+            ("--until", self.until.is_some()),
+            ("--row-days", self.row_days.is_some()),
+            ("--model", self.model.is_some()),
+            ("--drift", self.drift == Some(DriftName::Fitted)),
+            ("--estimator", self.estimator.is_some()),
+            ("--weight-half-life", self.weight_half_life.is_some()),
+            ("--change-days", self.change_days.is_some()),
+            ("--missing", self.missing.is_some()),
+        ];
+        given.into_iter().find(|(_, is_given)| *is_given).map(|(name, _)| name)
+    }
+}
+
 impl LaterArguments {
     /// The first of them that was given, as it is typed. `--read-as absolute` is what is done anyway.
     pub fn first_given(&self) -> Option<&'static str> {
         let read_as = self.read_as.clone().filter(|how| how != "absolute");
-        let given = [
-            ("--history", &self.history),
-            ("--limits", &self.limits),
-            ("--against", &self.against),
-            ("--read-as", &read_as),
-            ("--parameter-range", &self.parameter_range),
-            ("--estimator", &self.estimator),
-            ("--weight-half-life", &self.weight_half_life),
-            ("--change-days", &self.change_days),
-            ("--since", &self.since),
-            ("--until", &self.until),
-            ("--row-days", &self.row_days),
-            ("--model", &self.model),
-            ("--missing", &self.missing),
-            ("--drift", &self.drift),
-        ];
+        let given = [("--limits", &self.limits), ("--against", &self.against), ("--read-as", &read_as)];
         given.into_iter().find(|(_, value)| value.is_some()).map(|(name, _)| name)
     }
 }
@@ -228,6 +305,10 @@ fn parse_confidence(text: &str) -> Result<Confidence, String> {
 fn parse_positive(text: &str) -> Result<f64, String> {
     let number = text.trim().parse::<f64>().ok().filter(|number| number.is_finite() && *number > 0.0);
     number.ok_or_else(|| "expected a number above 0, such as 2500000".into())
+}
+
+fn parse_change_days(text: &str) -> Result<u32, String> {
+    text.parse().ok().filter(|rows| [1, 5, 10].contains(rows)).ok_or_else(|| "expected 1, 5 or 10".into())
 }
 
 fn parse_threads(text: &str) -> Result<usize, String> {

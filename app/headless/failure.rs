@@ -1,5 +1,6 @@
 //! Why a command gave no answer, and the exit code that says so.
 
+use ebbmark_engine::measures::parameter_range::RangeError;
 use ebbmark_engine::simulate::SimulateError;
 use ebbmark_engine::tables::Faults;
 
@@ -9,6 +10,9 @@ pub enum Failure {
     /// The input is wrong; every fault is listed.
     #[error("{}", list(.0))]
     Input(#[from] Faults),
+    /// The call does not hang together; a sentence without a full stop.
+    #[error("{0}")]
+    Call(String),
     /// The call asks for what this version does not do.
     #[error("{what}: not yet in this version. {instead}")]
     NotYet {
@@ -32,8 +36,20 @@ impl Failure {
     /// 2 where the call or the input is wrong, 1 where the program failed.
     pub fn exit_code(&self) -> u8 {
         match self {
-            Self::Input(_) | Self::NotYet { .. } | Self::Run(SimulateError::NotSemiDefinite { .. }) => 2,
+            Self::Input(_)
+            | Self::Call(_)
+            | Self::NotYet { .. }
+            | Self::Run(SimulateError::NotSemiDefinite { .. }) => 2,
             Self::Run(_) | Self::Output(_) | Self::Program(_) => 1,
+        }
+    }
+}
+
+impl From<RangeError> for Failure {
+    fn from(error: RangeError) -> Self {
+        match error {
+            RangeError::Faults(faults) => Self::Input(faults),
+            RangeError::Simulate(error) => Self::Run(error),
         }
     }
 }

@@ -9,6 +9,11 @@ mod columns;
 /// Why there is no answer.
 pub mod failure;
 mod progress;
+/// `ebbmark fit`.
+pub mod fit;
+/// What it answers.
+pub mod fit_answer;
+mod fit_table;
 /// `ebbmark read`.
 pub mod read;
 mod source;

@@ -1,5 +1,6 @@
-//! A line on standard error that grows while paths are drawn. Shown on a terminal only.
+//! A line on standard error that grows while work is done. Shown on a terminal only.
 
+use ebbmark_engine::measures::RangeWatcher;
 use ebbmark_engine::simulate::{Run, Watcher};
 use std::io::{self, IsTerminal, Write};
 use std::sync::Mutex;
@@ -8,18 +9,32 @@ use std::time::{Duration, Instant};
 const WIDTH: usize = 30;
 const BETWEEN_PAINTS: Duration = Duration::from_millis(100);
 
-/// Watches a run and paints how far it is.
+/// Watches work and paints how far it is.
 pub(super) struct Progress {
-    paths: usize,
+    /// How much there is to do.
+    whole: usize,
+    /// What it counts.
+    unit: &'static str,
     /// Time of the last paint; none where nothing is painted.
     painted: Option<Mutex<Instant>>,
 }
 
 impl Progress {
-    /// For a run of so many paths; silent when asked, or where standard error is no terminal.
-    pub(super) fn new(paths: usize, is_silent: bool) -> Self {
+    /// For so many of a unit; silent when asked, or where standard error is no terminal.
+    pub(super) fn new(whole: usize, unit: &'static str, is_silent: bool) -> Self {
         let is_painted = !is_silent && io::stderr().is_terminal();
-        Self { paths, painted: is_painted.then(|| Mutex::new(Instant::now())) }
+        Self { whole, unit, painted: is_painted.then(|| Mutex::new(Instant::now())) }
+    }
+
+    fn paint(&self, done: usize) {
+        // A paint that finds another at work is left out.
+        let Some(Ok(mut painted)) = self.painted.as_ref().map(Mutex::try_lock) else { return };
+        if painted.elapsed() < BETWEEN_PAINTS {
+            return;
+        }
+        *painted = Instant::now();
+        let mut err = io::stderr().lock();
+        let _ = write!(err, "\r{}", bar(done, self.whole, self.unit)).and_then(|()| err.flush());
     }
 
     /// Wipes the line.
@@ -32,14 +47,7 @@ impl Progress {
 
 impl Watcher for Progress {
     fn progress(&self, run: &Run) {
-        // A paint that finds another at work is left out.
-        let Some(Ok(mut painted)) = self.painted.as_ref().map(Mutex::try_lock) else { return };
-        if painted.elapsed() < BETWEEN_PAINTS {
-            return;
-        }
-        *painted = Instant::now();
-        let mut err = io::stderr().lock();
-        let _ = write!(err, "\r{}", bar(run.paths(), self.paths)).and_then(|()| err.flush());
+        self.paint(run.paths());
     }
 
     fn is_stopped(&self) -> bool {
@@ -47,9 +55,19 @@ impl Watcher for Progress {
     }
 }
 
-fn bar(done: usize, paths: usize) -> String {
-    let filled = (WIDTH * done) / paths.max(1);
-    format!("{}{} {done} of {paths} paths", "=".repeat(filled), "-".repeat(WIDTH - filled.min(WIDTH)))
+impl RangeWatcher for Progress {
+    fn progress(&self, draws: usize) {
+        self.paint(draws);
+    }
+
+    fn is_stopped(&self) -> bool {
+        false
+    }
+}
+
+fn bar(done: usize, whole: usize, unit: &str) -> String {
+    let filled = (WIDTH * done) / whole.max(1);
+    format!("{}{} {done} of {whole} {unit}", "=".repeat(filled), "-".repeat(WIDTH - filled.min(WIDTH)))
 }
 
 #[cfg(test)]
@@ -58,8 +76,8 @@ mod tests {
 
     #[test]
     fn exact_bar_fills_with_the_paths() {
-        assert_eq!(bar(0, 100), format!("{} 0 of 100 paths", "-".repeat(30)));
-        assert_eq!(bar(50, 100), format!("{}{} 50 of 100 paths", "=".repeat(15), "-".repeat(15)));
-        assert_eq!(bar(100, 100), format!("{} 100 of 100 paths", "=".repeat(30)));
+        assert_eq!(bar(0, 100, "paths"), format!("{} 0 of 100 paths", "-".repeat(30)));
+        assert_eq!(bar(50, 100, "paths"), format!("{}{} 50 of 100 paths", "=".repeat(15), "-".repeat(15)));
+        assert_eq!(bar(100, 100, "paths"), format!("{} 100 of 100 paths", "=".repeat(30)));
     }
 }

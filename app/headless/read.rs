@@ -7,7 +7,7 @@ use super::progress::Progress;
 use super::{source, streams, table};
 use crate::workspace::Document;
 use ebbmark_engine::factors::Model;
-use ebbmark_engine::measures;
+use ebbmark_engine::measures::{self, ParameterRange, RangeRequest, Reading};
 use ebbmark_engine::simulate::{self, Plan, Run};
 use ebbmark_engine::tables::{Notice, NoticeLevel};
 use std::path::PathBuf;
@@ -27,7 +27,11 @@ pub fn read(arguments: &ReadArguments) -> Result<(), Failure> {
     }
     let (mut document, notices) = source::from_arguments(&arguments.source)?;
     source::apply(&arguments.settings, &mut document);
-    answer_and_print(&document, notices, &arguments.output)
+    source::apply_fit(&arguments.fit, &mut document)?;
+    if arguments.parameter_range && document.history.as_ref().is_none_or(|history| history.levels.is_err()) {
+        return Err(Failure::Call("--parameter-range needs a history (--history FILE)".into()));
+    }
+    answer_and_print(&document, notices, &arguments.output, arguments.parameter_range)
 }
 
 /// Reads the book in these files, or the built-in example, and prints the answer as text.
@@ -36,19 +40,24 @@ pub fn read(arguments: &ReadArguments) -> Result<(), Failure> {
 /// As [`read`].
 pub fn read_files(paths: &[PathBuf]) -> Result<(), Failure> {
     let (document, notices) = source::from_files(paths)?;
-    answer_and_print(&document, notices, &OutputArguments::default())
+    answer_and_print(&document, notices, &OutputArguments::default(), false)
 }
 
 fn answer_and_print(
     document: &Document,
     notices: Vec<Notice>,
     output: &OutputArguments,
+    has_range: bool,
 ) -> Result<(), Failure> {
-    let answer = answer(document, notices, output)?;
+    let answer = answer(document, notices, output, has_range)?;
     if !output.quiet {
         streams::tell_notices(&answer.notices);
     }
-    let text = if output.json { json(&answer)? } else { table::write(&answer, document.settings.loss_from) };
+    let text = if output.json {
+        streams::json(&answer)?
+    } else {
+        table::write(&answer, document.settings.loss_from)
+    };
     streams::print_answer(&text)
 }
 
@@ -56,14 +65,16 @@ fn answer(
     document: &Document,
     mut notices: Vec<Notice>,
     output: &OutputArguments,
+    has_range: bool,
 ) -> Result<Answer, Failure> {
     let settings = &document.settings;
     let days = settings.reading_day;
-    let model = Model::assemble(&document.inputs, &settings.model_settings())?;
+    let model = document.assemble()?.model;
     let started = Instant::now();
     let run = simulate(&model, document, output)?;
     let sample = run.sample(days).ok_or_else(|| Failure::Program("the run kept no sample".into()))?;
     let reading = measures::reading(&model, &sample, &settings.conventions());
+    let range = if has_range { Some(parameter_range(document, &reading, output)?) } else { None };
     let seconds = started.elapsed().as_secs_f64();
 
     let date = document.date_of(days);
@@ -74,7 +85,7 @@ fn answer(
             name: document.name.clone(),
             currency: model.currency.clone(),
             value: model.value,
-            as_of: settings.as_of,
+            as_of: document.as_of(),
             capital: settings.percent_base(model.value),
             read_as: "absolute",
         },
@@ -82,7 +93,7 @@ fn answer(
         run: RunAnswer { paths: run.paths(), seed: settings.seed, steps: days, sampling: "plain", seconds },
         moments: reading.moments,
         loss: reading.loss,
-        parameter_range: None,
+        parameter_range: range,
         drawdown: reading.drawdown,
         limit: reading.limit,
         limits: [],
@@ -101,19 +112,41 @@ fn simulate(model: &Model, document: &Document, output: &OutputArguments) -> Res
         loss_limit: settings.loss_limit,
         threads: output.threads.map(|count| count.min(MOST_THREADS)),
     };
-    let progress = Progress::new(plan.paths, output.quiet);
+    let progress = Progress::new(plan.paths, "paths", output.quiet);
     let run = simulate::run(model, &plan, &progress);
     progress.finish();
     Ok(run?)
+}
+
+/// The range that the fit's own errors leave, from histories like the one at hand.
+fn parameter_range(
+    document: &Document,
+    reading: &Reading,
+    output: &OutputArguments,
+) -> Result<ParameterRange, Failure> {
+    let settings = &document.settings;
+    let no_history = || Failure::Program("the history is gone".into());
+    let history = document.history.as_ref().ok_or_else(no_history)?;
+    let request = RangeRequest {
+        inputs: &document.inputs,
+        history: history.history().ok_or_else(no_history)?,
+        fit: &history.settings,
+        model: &settings.model_settings(),
+        day: settings.reading_day,
+        conventions: &settings.conventions(),
+        draws: measures::parameter_range::USUAL_DRAWS,
+        paths: measures::parameter_range::USUAL_PATHS,
+        seed: settings.seed,
+    };
+    let losses: Vec<(f64, f64)> = reading.loss.iter().map(|row| (row.var, row.es)).collect();
+    let progress = Progress::new(request.draws, "histories", output.quiet);
+    let range = measures::parameter_range(request, &losses, &progress)?;
+    progress.finish();
+    Ok(range)
 }
 
 /// Dates are counted in weekdays where no holidays are known.
 fn notice_of_weekdays(document: &Document) -> Option<Notice> {
     let text = "The date counts weekdays as trading days; give a holidays file to leave holidays out.";
     document.holidays.is_none().then(|| Notice { level: NoticeLevel::Info, text: text.into() })
-}
-
-fn json(answer: &Answer) -> Result<String, Failure> {
-    let text = serde_json::to_string_pretty(answer).map_err(|error| Failure::Program(error.to_string()))?;
-    Ok(text + "\n")
 }

@@ -1,10 +1,14 @@
 //! Which book a command reads: the files named by role, a workspace, files told apart by their headers, or the
 //! built-in example; and the settings of the line, which stand above those of a workspace.
 
-use super::arguments::{LossFromName, SettingArguments, SourceArguments};
+use super::arguments::{
+    DriftName, EstimatorName, FitArguments, LossFromName, MissingName, ModelName, SettingArguments,
+    SourceArguments,
+};
 use super::failure::Failure;
 use crate::opening::{self, FileKind, Opened};
 use crate::workspace::{self, Document, Settings};
+use ebbmark_engine::fit::{DriftChoice, Estimator, FitSettings, Missing, ModelChoice};
 use ebbmark_engine::measures::LossFrom;
 use ebbmark_engine::tables::{Faults, Notice};
 use std::path::{Path, PathBuf};
@@ -52,6 +56,7 @@ fn named_files(arguments: &SourceArguments) -> Vec<(FileKind, PathBuf)> {
         (FileKind::Exposures, &arguments.exposures),
         (FileKind::Factors, &arguments.factors),
         (FileKind::Correlation, &arguments.correlation),
+        (FileKind::History, &arguments.history),
         (FileKind::Holidays, &arguments.holidays),
     ];
     named.into_iter().filter_map(|(role, path)| Some((role, path.clone()?))).collect()
@@ -76,6 +81,34 @@ pub(super) fn apply(arguments: &SettingArguments, document: &mut Document) {
     }
 }
 
+/// Puts the line's settings of the fit above those of the document.
+///
+/// # Errors
+/// A failure where one is given without a history.
+pub(super) fn apply_fit(arguments: &FitArguments, document: &mut Document) -> Result<(), Failure> {
+    match (&mut document.history, arguments.first_given()) {
+        (None, Some(option)) => Err(Failure::Call(format!("{option} needs a history (--history FILE)"))),
+        (None, None) => Ok(()),
+        (Some(history), _) => {
+            set_fit(arguments, &mut history.settings);
+            Ok(())
+        }
+    }
+}
+
+/// Puts the line's settings above those at hand.
+pub(super) fn set_fit(arguments: &FitArguments, settings: &mut FitSettings) {
+    put(&mut settings.since, arguments.since.map(Some));
+    put(&mut settings.until, arguments.until.map(Some));
+    put(&mut settings.row_days, arguments.row_days.map(Some));
+    put(&mut settings.model, arguments.model.map(ModelChoice::from));
+    put(&mut settings.drift, arguments.drift.map(DriftChoice::from));
+    put(&mut settings.estimator, arguments.estimator.map(Estimator::from));
+    put(&mut settings.weight_half_life_days, arguments.weight_half_life);
+    put(&mut settings.change_days, arguments.change_days);
+    put(&mut settings.missing, arguments.missing.map(Missing::from));
+}
+
 fn put<T>(setting: &mut T, typed: Option<T>) {
     if let Some(value) = typed {
         *setting = value;
@@ -87,6 +120,44 @@ impl From<LossFromName> for LossFrom {
         match name {
             LossFromName::Today => Self::Today,
             LossFromName::Mean => Self::Mean,
+        }
+    }
+}
+
+impl From<ModelName> for ModelChoice {
+    fn from(name: ModelName) -> Self {
+        match name {
+            ModelName::Log => Self::Log,
+            ModelName::Level => Self::Level,
+        }
+    }
+}
+
+impl From<DriftName> for DriftChoice {
+    fn from(name: DriftName) -> Self {
+        match name {
+            DriftName::Zero => Self::Zero,
+            DriftName::Fitted => Self::Fitted,
+        }
+    }
+}
+
+impl From<EstimatorName> for Estimator {
+    fn from(name: EstimatorName) -> Self {
+        match name {
+            EstimatorName::Sample => Self::Sample,
+            EstimatorName::Weighted => Self::Weighted,
+            EstimatorName::ShrunkIdentity => Self::ShrunkIdentity,
+            EstimatorName::ShrunkConstant => Self::ShrunkConstant,
+        }
+    }
+}
+
+impl From<MissingName> for Missing {
+    fn from(name: MissingName) -> Self {
+        match name {
+            MissingName::Common => Self::Common,
+            MissingName::Pairs => Self::Pairs,
         }
     }
 }

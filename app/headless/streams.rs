@@ -3,6 +3,7 @@
 
 use super::failure::Failure;
 use ebbmark_engine::tables::Notice;
+use serde::Serialize;
 use std::io::{self, ErrorKind, Write};
 
 /// Writes the answer; a closed pipe is no failure.
@@ -15,6 +16,15 @@ pub fn print_answer(answer: &str) -> Result<(), Failure> {
         Err(error) if error.kind() != ErrorKind::BrokenPipe => Err(error.into()),
         _ => Ok(()),
     }
+}
+
+/// An answer as one JSON object.
+///
+/// # Errors
+/// [`Failure::Program`] where it can't be written so.
+pub fn json(answer: &impl Serialize) -> Result<String, Failure> {
+    let text = serde_json::to_string_pretty(answer).map_err(|error| Failure::Program(error.to_string()))?;
+    Ok(text + "\n")
 }
 
 /// Tells something on standard error; where there is none to be had, nobody is listening.

@@ -1,8 +1,10 @@
 //! The built-in example book, compiled in from `example-portfolios/mixed-fund`.
 
-use super::{FileKind, Opened, Parts};
+use super::history::hash_of;
+use super::{FileKind, Opened, Parts, Source};
 use ebbmark_engine::tables::{Faults, Table};
 use jiff::civil::{Date, date};
+use std::path::{Path, PathBuf};
 
 /// Stem of the example's positions file.
 const NAME: &str = "Ellerwick";
@@ -28,8 +30,19 @@ const FILES: [(FileKind, &str, &str); 5] = [
 pub fn built_in_example() -> Result<Opened, Faults> {
     let mut parts = Parts::default();
     for (kind, label, text) in FILES {
-        parts.take(kind, NAME, &Table::read(text, label)?)?;
+        let source = Source { path: path_of(label), stem: NAME.to_owned(), hash: hash_of(text.as_bytes()) };
+        parts.take(kind, &source, &Table::read(text, label)?)?;
     }
     let opened = parts.into_book()?;
     Ok(Opened { book_currency: Some(CURRENCY.to_owned()), as_of: Some(AS_OF), ..opened })
+}
+
+/// Where a file of the example is said to stand.
+fn path_of(label: &str) -> PathBuf {
+    Path::new("built-in example").join(label)
+}
+
+/// The text of a file of the example, by the path it is said to have.
+pub(super) fn built_in_text(path: &Path) -> Option<&'static str> {
+    FILES.iter().find(|(_, label, _)| path_of(label) == path).map(|(_, _, text)| *text)
 }

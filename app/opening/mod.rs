@@ -2,10 +2,12 @@
 //! screen, no command line and no workspace.
 
 mod example;
+mod history;
 mod parts;
 
 pub use ebbmark_engine::tables::FileKind;
 pub use example::built_in_example;
+pub use history::{OpenedHistory, read_history_file};
 pub use parts::{Opened, Parts};
 
 use ebbmark_engine::tables::{Fault, Faults, Place, Table};
@@ -18,9 +20,9 @@ use std::path::{Path, PathBuf};
 /// Every fault of every file.
 pub fn read_files(paths: &[PathBuf]) -> Result<Parts, Faults> {
     gather(paths.iter().map(|path| {
-        let table = read_table(path)?;
+        let (source, table) = read_table(path)?;
         let kind = FileKind::of(&table).map_err(|fault| Faults(vec![fault]))?;
-        Ok((kind, stem(path), table))
+        Ok((kind, source, table))
     }))
 }
 
@@ -29,29 +31,46 @@ pub fn read_files(paths: &[PathBuf]) -> Result<Parts, Faults> {
 /// # Errors
 /// Every fault of every file.
 pub fn read_named(files: &[(FileKind, PathBuf)]) -> Result<Parts, Faults> {
-    gather(files.iter().map(|(kind, path)| Ok((*kind, stem(path), read_table(path)?))))
+    gather(files.iter().map(|(kind, path)| {
+        let (source, table) = read_table(path)?;
+        Ok((*kind, source, table))
+    }))
 }
 
-fn gather(tables: impl Iterator<Item = Result<(FileKind, String, Table), Faults>>) -> Result<Parts, Faults> {
+fn gather(tables: impl Iterator<Item = Result<(FileKind, Source, Table), Faults>>) -> Result<Parts, Faults> {
     let (mut parts, mut faults) = (Parts::default(), Vec::new());
     for table in tables {
-        let taken = table.and_then(|(kind, stem, table)| parts.take(kind, &stem, &table));
+        let taken = table.and_then(|(kind, source, table)| parts.take(kind, &source, &table));
         faults.extend(taken.err().into_iter().flat_map(|more| more.0));
     }
     if faults.is_empty() { Ok(parts) } else { Err(Faults(faults)) }
 }
 
-fn read_table(path: &Path) -> Result<Table, Faults> {
+/// Where a file came from.
+struct Source {
+    path: PathBuf,
+    /// What a book of it is called.
+    stem: String,
+    /// Of its bytes.
+    hash: String,
+}
+
+fn read_table(path: &Path) -> Result<(Source, Table), Faults> {
+    let bytes = read_bytes(path)?;
+    let table = Table::from_bytes(&bytes, &path.display().to_string())?;
+    Ok((Source { path: path.to_path_buf(), stem: stem(path), hash: history::hash_of(&bytes) }, table))
+}
+
+fn read_bytes(path: &Path) -> Result<Vec<u8>, Faults> {
     let label = path.display().to_string();
-    let bytes = fs::read(path).map_err(|error| {
-        let place = Place { file: label.clone(), line: None, column: None };
+    fs::read(path).map_err(|error| {
+        let place = Place { file: label, line: None, column: None };
         Faults(vec![Fault {
             place,
             found: error.to_string(),
             expected: "a file that can be read".to_owned(),
         }])
-    })?;
-    Table::from_bytes(&bytes, &label)
+    })
 }
 
 /// What a book is called.

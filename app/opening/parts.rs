@@ -1,10 +1,11 @@
 //! What some files hold, part by part, until a book can be made of them.
 
+use super::{OpenedHistory, Source};
 use ebbmark_engine::book::{Exposure, Holding, read_exposures, read_positions};
 use ebbmark_engine::factors::{
     CorrelationTable, FactorRow, FileLabels, Inputs, read_correlation, read_factors,
 };
-use ebbmark_engine::history::read_holidays;
+use ebbmark_engine::history::{read_history, read_holidays};
 use ebbmark_engine::tables::{Fault, Faults, FileKind, Notice, Place, Table};
 use jiff::civil::Date;
 
@@ -21,6 +22,8 @@ pub struct Parts {
     pub factors: Option<Vec<FactorRow>>,
     /// The correlation file.
     pub correlation: Option<CorrelationTable>,
+    /// Levels by date.
+    pub history: Option<OpenedHistory>,
     /// Days without trading, ascending.
     pub holidays: Option<Vec<Date>>,
     /// Labels of the files.
@@ -36,6 +39,8 @@ pub struct Opened {
     pub name: String,
     /// Everything that makes a model.
     pub inputs: Inputs,
+    /// Levels of its factors by date.
+    pub history: Option<OpenedHistory>,
     /// Days without trading, ascending; none where trading days are weekdays.
     pub holidays: Option<Vec<Date>>,
     /// The book's currency, where it is known beside the files: the built-in example's.
@@ -51,7 +56,7 @@ impl Parts {
     ///
     /// # Errors
     /// Every fault of the file, or that there is one of its kind already, or that its kind is not read yet.
-    pub(super) fn take(&mut self, kind: FileKind, stem: &str, table: &Table) -> Result<(), Faults> {
+    pub(super) fn take(&mut self, kind: FileKind, source: &Source, table: &Table) -> Result<(), Faults> {
         let label = table.label.clone();
         let is_second =
             || Err(one_fault(table, &format!("a second file of {}", kind.word()), "one of each kind"));
@@ -60,10 +65,11 @@ impl Parts {
             FileKind::Exposures if self.exposures.is_some() => return is_second(),
             FileKind::Factors if self.factors.is_some() => return is_second(),
             FileKind::Correlation if self.correlation.is_some() => return is_second(),
+            FileKind::History if self.history.is_some() => return is_second(),
             FileKind::Holidays if self.holidays.is_some() => return is_second(),
             FileKind::Positions => {
                 self.holdings = Some(self.told(read_positions(table)?));
-                self.name = Some(stem.to_owned());
+                self.name = Some(source.stem.clone());
                 self.files.positions = label;
             }
             FileKind::Exposures => {
@@ -79,12 +85,17 @@ impl Parts {
                 self.files.correlation = label;
             }
             FileKind::Holidays => self.holidays = Some(self.told(read_holidays(table)?)),
-            FileKind::History | FileKind::Limits => {
+            FileKind::History => {
+                let history = self.told(read_history(table)?);
+                let (path, hash) = (source.path.clone(), source.hash.clone());
+                self.history = Some(OpenedHistory { path, hash, history });
+            }
+            FileKind::Limits => {
                 let found = format!("a file of {}", kind.word());
                 return Err(one_fault(
                     table,
                     &found,
-                    "positions, exposures, factors, correlation or holidays: not yet",
+                    "positions, exposures, factors, correlation, history or holidays: not yet",
                 ));
             }
         }
@@ -113,8 +124,8 @@ impl Parts {
             correlation: self.correlation,
             files: self.files,
         };
-        let (holidays, notices) = (self.holidays, self.notices);
-        Ok(Opened { name, inputs, holidays, book_currency: None, as_of: None, notices })
+        let (history, holidays, notices) = (self.history, self.holidays, self.notices);
+        Ok(Opened { name, inputs, history, holidays, book_currency: None, as_of: None, notices })
     }
 }
 

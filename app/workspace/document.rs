@@ -1,7 +1,9 @@
 //! A book with everything that decides its figures. How it is looked at lives in `view`; nothing here is computed.
 
+use super::BookHistory;
 use crate::opening::Opened;
 use ebbmark_engine::factors::{Inputs, ModelSettings};
+use ebbmark_engine::fit::FitSettings;
 use ebbmark_engine::history::date_after;
 use ebbmark_engine::measures::{Confidence, Conventions, LossFrom};
 use ebbmark_engine::tables::Notice;
@@ -22,6 +24,8 @@ pub struct Document {
     pub name: String,
     /// Holdings, exposures, factors and correlation, by content.
     pub inputs: Arc<Inputs>,
+    /// Levels of its factors by date, where there are any.
+    pub history: Option<BookHistory>,
     /// Holidays, ascending; none where trading days are weekdays.
     pub holidays: Option<Arc<Vec<Date>>>,
     /// Everything else that decides the figures.
@@ -58,21 +62,25 @@ pub struct Settings {
 }
 
 impl Document {
+    /// Date of the prices: the one set, else the last of the history.
+    pub fn as_of(&self) -> Option<Date> {
+        self.settings.as_of.or_else(|| self.history.as_ref()?.last_date())
+    }
+
     /// Date of a day ahead; none where the prices have no date.
     pub fn date_of(&self, day: u32) -> Option<Date> {
         let holidays = self.holidays.as_deref().map_or([].as_slice(), Vec::as_slice);
-        date_after(self.settings.as_of?, day, holidays)
+        date_after(self.as_of()?, day, holidays)
     }
-}
 
-impl Document {
     /// A book as it was opened, and what its readers want told. It has a currency, a date, capital and limit of its own;
     /// how it is read is taken over from `before`.
     pub fn of_book(book: Opened, before: &Settings) -> (Self, Vec<Notice>) {
-        let Opened { name, inputs, holidays, book_currency, as_of, notices } = book;
+        let Opened { name, inputs, history, holidays, book_currency, as_of, notices } = book;
         let settings = Settings { book_currency, as_of, capital: None, loss_limit: None, ..before.clone() };
         let holidays = holidays.map(Arc::new);
-        (Self { name, inputs: Arc::new(inputs), holidays, settings }, notices)
+        let history = history.map(|history| BookHistory::of(history, FitSettings::usual()));
+        (Self { name, inputs: Arc::new(inputs), history, holidays, settings }, notices)
     }
 }
 

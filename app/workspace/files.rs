@@ -30,15 +30,19 @@ pub enum WorkspaceError {
     },
 }
 
-/// Reads a workspace; the file is never changed by it.
+/// Reads a workspace and the history it names; the files are never changed by it.
 ///
 /// # Errors
 /// [`WorkspaceError`].
 pub fn read(path: &Path) -> Result<Workspace, WorkspaceError> {
     let text = std::fs::read_to_string(path)
         .map_err(|error| WorkspaceError::File { path: path.display().to_string(), error })?;
-    workspace_of_text(&text)
-        .map_err(|error| WorkspaceError::Format { path: path.display().to_string(), error })
+    let mut workspace = workspace_of_text(&text)
+        .map_err(|error| WorkspaceError::Format { path: path.display().to_string(), error })?;
+    if let Some(history) = &mut workspace.document.history {
+        history.read_again(path.parent());
+    }
+    Ok(workspace)
 }
 
 /// Writes a workspace whole.

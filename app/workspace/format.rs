@@ -2,8 +2,9 @@
 
 use super::check_rows;
 use super::document::{FEWEST_PATHS, MOST_PATHS};
-use super::{Document, Kept, LONGEST_HORIZON_DAYS, Settings, View, Workspace};
-use ebbmark_engine::factors::Inputs;
+use super::{BookHistory, Document, Kept, LONGEST_HORIZON_DAYS, Settings, View, Workspace, check_fitted};
+use ebbmark_engine::factors::{Fitted, Inputs};
+use ebbmark_engine::fit::FitSettings;
 use ebbmark_engine::measures::{Confidence, LossFrom};
 use jiff::civil::Date;
 use ron::ser::PrettyConfig;
@@ -56,6 +57,16 @@ struct WorkspaceText {
     holidays: Option<Vec<Date>>,
     view: View,
     inputs: Inputs,
+    #[serde(default)]
+    history: Option<HistoryText>,
+}
+
+#[derive(Serialize, Deserialize)]
+struct HistoryText {
+    path: PathBuf,
+    sha256: String,
+    settings: FitSettings,
+    fitted: Option<Fitted>,
 }
 
 #[derive(Serialize, Deserialize)]
@@ -156,6 +167,7 @@ impl WorkspaceText {
             holidays: document.holidays.as_deref().cloned(),
             view: workspace.view.clone(),
             inputs: Inputs::clone(&document.inputs),
+            history: document.history.as_ref().map(HistoryText::of),
         }
     }
 
@@ -164,10 +176,36 @@ impl WorkspaceText {
         let document = Document {
             name: self.name,
             inputs: Arc::new(self.inputs),
+            history: self.history.map(HistoryText::checked).transpose()?,
             holidays: self.holidays.map(Arc::new),
             settings: self.settings.checked()?,
         };
         Ok(Workspace { document, view: self.view })
+    }
+}
+
+impl HistoryText {
+    fn of(history: &BookHistory) -> Self {
+        Self {
+            path: history.path.clone(),
+            sha256: history.hash.clone(),
+            settings: history.settings.clone(),
+            fitted: history.fitted.as_deref().cloned(),
+        }
+    }
+
+    /// Without its levels: whoever opens files reads them again.
+    fn checked(self) -> Result<BookHistory, FormatError> {
+        let Self { path, sha256, settings, fitted } = self;
+        let days = settings.weight_half_life_days;
+        within("weight_half_life_days", days, days.is_finite() && days > 0.0, "trading days above 0")?;
+        let rows = settings.change_days;
+        within("change_days", rows, [1, 5, 10].contains(&rows), "1, 5 or 10")?;
+        let rows = settings.row_days.unwrap_or(1);
+        within("row_days", rows, rows > 0, "1 or more")?;
+        fitted.as_ref().map_or(Ok(()), check_fitted)?;
+        let levels = Err(format!("{} was not read", path.display()));
+        Ok(BookHistory { path, hash: sha256, settings, levels, fitted: fitted.map(Arc::new) })
     }
 }
 

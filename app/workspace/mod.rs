@@ -3,6 +3,10 @@
 
 /// The book and its settings: what undo covers and a workspace saves.
 pub mod document;
+/// The book's history.
+pub mod history;
+/// From a document to its model.
+pub mod assembling;
 /// How the window looks at a document.
 pub mod view;
 /// Workspaces and kept sessions as text.
@@ -16,11 +20,13 @@ pub mod files;
 /// The session that survives a crash.
 pub mod recovery;
 
+pub use assembling::{Assembled, Assembler};
 pub use document::{Document, LONGEST_HORIZON_DAYS, Settings};
 pub use files::{EXTENSION, WorkspaceError, is_workspace, read, write};
 pub use format::{FORMAT, FormatError};
+pub use history::BookHistory;
 pub use recovery::{Beginning, Slot, state_folder};
-pub use soundness::check_rows;
+pub use soundness::{check_fitted, check_rows};
 use std::path::PathBuf;
 pub use view::{BookColumn, BookOrder, Tab, Theme, View};
 pub use whole::write_whole;

@@ -54,7 +54,11 @@ impl Slot {
         };
         let Candidate { slot, kept, .. } =
             chosen.ok_or_else(|| io::Error::other("too many programs keep their sessions there"))?;
-        Ok((slot, kept.filter(|_| beginning == Beginning::Last)))
+        let mut kept = kept.filter(|_| beginning == Beginning::Last);
+        if let Some(history) = kept.as_mut().and_then(|kept| kept.workspace.document.history.as_mut()) {
+            history.read_again(None);
+        }
+        Ok((slot, kept))
     }
 
     /// Keeps a session, whole.

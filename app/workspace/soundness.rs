@@ -2,8 +2,8 @@
 //! have been at it. Whether the rows make a model as a whole is for the engine to say.
 
 use super::FormatError;
-use ebbmark_engine::book::{Holding, Kind};
-use ebbmark_engine::factors::{CorrelationTable, Inputs};
+use ebbmark_engine::book::{HalfLife, Holding, Kind};
+use ebbmark_engine::factors::{CorrelationTable, Fitted, Inputs};
 
 /// Checks every row.
 ///
@@ -19,6 +19,34 @@ pub fn check_rows(inputs: &Inputs) -> Result<(), FormatError> {
         finite(&format!("level of {}", row.name), row.level.unwrap_or_default())?;
     }
     inputs.correlation.as_ref().map_or(Ok(()), check_correlation)
+}
+
+/// Checks every figure that a history gave.
+///
+/// # Errors
+/// The first that can't be used.
+pub fn check_fitted(fitted: &Fitted) -> Result<(), FormatError> {
+    for factor in &fitted.factors {
+        finite(&format!("last level of {}", factor.name), factor.level)?;
+        let Some(diffusion) = factor.diffusion else { continue };
+        let volatility = diffusion.volatility();
+        let found = || format!("fitted volatility {volatility} of {}", factor.name);
+        require(volatility.is_finite() && volatility >= 0.0, found, "a volatility of 0 or more")?;
+        finite(&format!("fitted drift of {}", factor.name), diffusion.drift())?;
+        let (long_run, half_life) = diffusion.reversion().unwrap_or((1.0, HalfLife::None));
+        let is_log = diffusion.is_log();
+        let found = || format!("fitted long run {long_run} of {}", factor.name);
+        require(
+            long_run.is_finite() && (long_run > 0.0 || !is_log),
+            found,
+            "a level, above 0 for a log model",
+        )?;
+        if let HalfLife::Days(days) = half_life {
+            let found = || format!("fitted half-life {days} of {}", factor.name);
+            require(days.is_finite() && days > 0.0, found, "trading days above 0")?;
+        }
+    }
+    fitted.correlation.as_ref().map_or(Ok(()), check_correlation)
 }
 
 fn check_holding(holding: &Holding) -> Result<(), FormatError> {

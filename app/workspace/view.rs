@@ -9,6 +9,8 @@ pub enum Tab {
     /// Bands ahead with the reading line.
     #[default]
     Horizon,
+    /// What the history says.
+    Fit,
     /// The correlation matrix as a heat map.
     Correlation,
 }
@@ -59,6 +61,8 @@ pub struct View {
     pub holding: Option<String>,
     /// Chosen cell of the correlation matrix, by the two factors' names.
     pub cell: Option<(String, String)>,
+    /// Factors marked in the fit, by name.
+    pub marked: Vec<String>,
     /// Column that the book is sorted by.
     pub order: Option<BookOrder>,
     /// Text that a shown holding's name or group contains, whatever the case.

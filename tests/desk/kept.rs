@@ -35,6 +35,7 @@ fn workspace() -> Workspace {
         factor: Some("Rate".to_owned()),
         holding: Some("Harbour".to_owned()),
         cell: Some(("Harbour".to_owned(), "Rate".to_owned())),
+        marked: vec!["Rate".to_owned()],
         order: Some(BookOrder { column: BookColumn::Value, is_ascending: false }),
         filter: "har".to_owned(),
     };

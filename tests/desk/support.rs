@@ -66,7 +66,7 @@ pub(crate) fn inputs() -> Inputs {
 /// The book, read from few paths so that tests are quick.
 pub(crate) fn document() -> Document {
     let settings = Settings { paths: 4_000, horizon_days: 63, ..Settings::usual() };
-    Document { name: "small".to_owned(), inputs: Arc::new(inputs()), holidays: None, settings }
+    Document { name: "small".to_owned(), inputs: Arc::new(inputs()), history: None, holidays: None, settings }
 }
 
 pub(crate) fn session() -> Session {

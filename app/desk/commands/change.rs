@@ -1,6 +1,7 @@
 //! What an edit sets, one value each. How it is written into the inputs lives in `session::edits`.
 
 use ebbmark_engine::book::{HalfLife, Kind, LevelUnit};
+use ebbmark_engine::fit::{DriftChoice, Estimator, Missing, ModelChoice};
 use ebbmark_engine::measures::{Confidence, LossFrom};
 use jiff::civil::Date;
 
@@ -42,6 +43,29 @@ pub enum Parameter {
     LongRun(f64),
     /// Half-life in trading days, or none.
     HalfLife(HalfLife),
+}
+
+/// One setting of the fit.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub enum FitChange {
+    /// First date used; none for the first there is.
+    Since(Option<Date>),
+    /// Last date used; none for the last there is.
+    Until(Option<Date>),
+    /// Trading days of a row; none to tell it from the dates.
+    RowDays(Option<u32>),
+    /// Which diffusions are chosen from.
+    Model(ModelChoice),
+    /// Drift that a geometric factor takes.
+    Drift(DriftChoice),
+    /// Estimator of the correlation.
+    Estimator(Estimator),
+    /// Half-life of its weights, trading days.
+    WeightHalfLife(f64),
+    /// Rows that a change spans: 1, 5 or 10.
+    ChangeDays(u32),
+    /// What is done with missing values.
+    Missing(Missing),
 }
 
 /// One setting.

@@ -1,6 +1,6 @@
 //! The closed list of commands. Words, keys and effects live elsewhere.
 
-use super::{ExportKind, HoldingChange, Parameter, PathPurpose, SettingChange};
+use super::{ExportKind, FitChange, HoldingChange, Parameter, PathPurpose, SettingChange};
 use crate::workspace::{BookColumn, Tab, Theme};
 use ebbmark_engine::book::{DiffusionKind, Holding};
 use std::path::PathBuf;
@@ -66,6 +66,17 @@ pub enum Command {
         /// The parameter and its value.
         parameter: Parameter,
     },
+    /// Takes the fitted diffusion of a kind for factors: nothing of them stays typed but that kind and a geometric drift.
+    TakeDiffusion {
+        /// Factors, by their names in the model.
+        factors: Vec<String>,
+        /// The diffusion.
+        kind: DiffusionKind,
+    },
+    /// Changes how the history is fitted.
+    ChangeFit(FitChange),
+    /// Takes the history away; what was fitted is then missing.
+    LeaveHistory,
     /// Sets a correlation, both triangles at once.
     SetCorrelation {
         /// One factor, by its name in the model.
@@ -91,6 +102,8 @@ pub enum Command {
         /// Factor of the column.
         column: String,
     },
+    /// Marks a factor in the fit, or takes the mark away.
+    MarkFactor(String),
     /// Sorts the book by a column; the other way round when it is sorted by it already, then not at all.
     SortBook(BookColumn),
     /// Shows only holdings whose name or group contains a text.

@@ -14,7 +14,7 @@ pub mod shortcuts;
 /// Words on buttons, in tooltips and in the undo list.
 pub mod words;
 
-pub use change::{HoldingChange, Parameter, SettingChange};
+pub use change::{FitChange, HoldingChange, Parameter, SettingChange};
 pub use command::Command;
 pub use export::{ExportFigure, ExportKind, PathPurpose, file_stem};
 pub use queue::Queue;

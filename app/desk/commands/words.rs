@@ -1,6 +1,6 @@
 //! Words of the commands: on buttons, in tooltips, and beside undo and redo.
 
-use super::{Command, HoldingChange, Parameter, PathPurpose, SettingChange, shortcuts};
+use super::{Command, FitChange, HoldingChange, Parameter, PathPurpose, SettingChange, shortcuts};
 use crate::workspace::{Tab, Theme};
 
 impl Command {
@@ -20,6 +20,11 @@ impl Command {
             Self::SetParameter { factor, parameter } => format!("{} of {factor}", parameter.text()),
             Self::SetDiffusion { factor, .. } => format!("Diffusion of {factor}"),
             Self::SetCorrelation { row, column, .. } => format!("Correlation of {row} and {column}"),
+            Self::TakeDiffusion { factors, kind } => match factors.as_slice() {
+                [factor] => format!("Take {} for {factor}", kind.word()),
+                several => format!("Take {} for {} factors", kind.word(), several.len()),
+            },
+            Self::ChangeFit(change) => change.text().to_owned(),
             Self::ChangeSetting(change) => change.text().to_owned(),
             Self::ChooseFactor(name) | Self::ChooseHolding(name) => name.clone(),
             Self::ChooseCell { row, column } => format!("{row}, {column}"),
@@ -38,7 +43,9 @@ impl Command {
             Self::AddHolding(_) => "Add holding",
             Self::RemoveHolding { .. } => "Remove holding",
             Self::SetExposure { .. } => "Sensitivity",
+            Self::LeaveHistory => "Leave the history",
             Self::ShowTab(Tab::Horizon) => "Horizon",
+            Self::ShowTab(Tab::Fit) => "Fit",
             Self::ShowTab(Tab::Correlation) => "Correlation",
             Self::SortBook(_) => "Sort",
             Self::FilterBook(_) => "Filter",
@@ -73,6 +80,7 @@ impl Command {
             Self::AddHolding(_) => "Add a holding to the end of the book",
             Self::RemoveHolding { .. } => "Remove this holding and its sensitivities",
             Self::ShowTab(Tab::Horizon) => "The book's value ahead, read where the line stands",
+            Self::ShowTab(Tab::Fit) => "What the history says of each factor, and how sure that is",
             Self::ShowTab(Tab::Correlation) => "Correlation of the factors' daily shocks",
             Self::ToggleTheme | Self::WearTheme(_) => "Change between light and dark",
             Self::StopRun => "Stop the run; the figures so far stay",
@@ -117,6 +125,23 @@ impl Parameter {
             Self::Volatility(_) => "Volatility",
             Self::LongRun(_) => "Long-run level",
             Self::HalfLife(_) => "Half-life",
+        }
+    }
+}
+
+impl FitChange {
+    /// What is set.
+    pub fn text(&self) -> &'static str {
+        match self {
+            Self::Since(_) => "First date of the fit",
+            Self::Until(_) => "Last date of the fit",
+            Self::RowDays(_) => "Days between rows",
+            Self::Model(_) => "Diffusions to choose from",
+            Self::Drift(_) => "Drift of the fit",
+            Self::Estimator(_) => "Estimator of the correlation",
+            Self::WeightHalfLife(_) => "Half-life of the weights",
+            Self::ChangeDays(_) => "Days of a change",
+            Self::Missing(_) => "Missing values",
         }
     }
 }

@@ -114,7 +114,7 @@ fn centre_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     }
     match tab {
         Tab::Horizon => horizon::horizon_ui(ui, session, queue),
-        Tab::Correlation => correlation::correlation_ui(ui, session, queue),
+        Tab::Correlation | Tab::Fit => correlation::correlation_ui(ui, session, queue),
     }
 }
 

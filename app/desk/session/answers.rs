@@ -5,7 +5,7 @@ use super::{Live, RunState, Session};
 use crate::desk::commands::{Command, PathPurpose};
 use crate::desk::worker::{Answer, Figures, Opened, Request};
 use crate::workspace::{Settings, View};
-use ebbmark_engine::factors::Model;
+use ebbmark_engine::factors::{Fitted, Model};
 use ebbmark_engine::tables::{Notice, NoticeLevel};
 use std::path::PathBuf;
 use std::sync::Arc;
@@ -61,8 +61,11 @@ impl Session {
         let is_newest = generation == self.asked_generation;
         if is_newest {
             match figures {
-                Figures::Model { model, days, has_all_days } => {
-                    return self.begin(generation, model, days, has_all_days);
+                Figures::Model { model, fit, fitted, days, has_all_days } => {
+                    self.keep_fitted(fitted);
+                    let requests = self.begin(generation, model, days, has_all_days);
+                    self.live.fit = fit;
+                    return requests;
                 }
                 Figures::Faults(faults) => {
                     self.faults = faults;
@@ -73,6 +76,15 @@ impl Session {
             }
         }
         if generation == self.live.generation { self.take_shown(figures) } else { Vec::new() }
+    }
+
+    /// What the history gave is kept with it, for a day on which the history is gone; no edit, and no step to undo.
+    fn keep_fitted(&mut self, fitted: Option<Arc<Fitted>>) {
+        if fitted.is_some()
+            && let Some(history) = &mut Arc::make_mut(&mut self.document).history
+        {
+            history.fitted = fitted;
+        }
     }
 
     /// A valid model: its run begins, and what is shown belongs to it from now on.

@@ -235,7 +235,7 @@ fn needs_run(old: &Document, new: &Document) -> bool {
             settings.book_currency.clone(),
         )
     };
-    old.inputs != new.inputs || of(&old.settings) != of(&new.settings)
+    old.inputs != new.inputs || old.history != new.history || of(&old.settings) != of(&new.settings)
 }
 
 fn needs_reading(old: &Settings, new: &Settings) -> bool {
@@ -249,6 +249,7 @@ fn changes_view(command: &Command) -> bool {
             | Command::ChooseFactor(_)
             | Command::ChooseHolding(_)
             | Command::ChooseCell { .. }
+            | Command::MarkFactor(_)
             | Command::SortBook(_)
             | Command::FilterBook(_)
             | Command::WearTheme(_)
@@ -273,6 +274,10 @@ fn change_view(view: &mut View, command: Command) {
                 _ => Some(BookOrder { column, is_ascending: true }),
             };
         }
+        Command::MarkFactor(name) => match view.marked.iter().position(|marked| *marked == name) {
+            Some(at) => drop(view.marked.remove(at)),
+            None => view.marked.push(name),
+        },
         Command::FilterBook(text) => view.filter = text,
         Command::WearTheme(theme) => view.theme = theme,
         Command::ToggleTheme => {

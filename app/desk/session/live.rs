@@ -2,6 +2,7 @@
 //! Filled by the worker's answers; panels only read.
 
 use ebbmark_engine::factors::Model;
+use ebbmark_engine::fit::Fit;
 use ebbmark_engine::measures::{Bands, Conventions, Density, Reading};
 use std::sync::Arc;
 
@@ -43,6 +44,8 @@ pub struct Live {
     pub generation: u64,
     /// The last valid model.
     pub model: Option<Arc<Model>>,
+    /// The fit of the history behind it; none without one.
+    pub fit: Option<Arc<Fit>>,
     /// Whether model and figures are from before the last edit, which made the inputs invalid.
     pub is_before_edit: bool,
     /// Days on which the line can stop, ascending; the last is the horizon.

@@ -3,8 +3,7 @@
 use super::board::{Board, Job};
 use super::post::Post;
 use super::request::Figures;
-use crate::workspace::{Document, Settings};
-use ebbmark_engine::factors::Model;
+use crate::workspace::{Assembled, Assembler, Settings};
 use ebbmark_engine::simulate::Plan;
 use std::sync::Arc;
 
@@ -15,16 +14,18 @@ pub const ONE_PRESS_DAYS: [u32; 6] = [1, 10, 21, 63, 126, 252];
 
 /// Assembles what is asked for until the program closes.
 pub(super) fn serve(board: &Board, post: &Post) {
+    let mut assembler = Assembler::default();
     while let Some((generation, document)) = board.wait_for(|state| state.to_assemble.take()) {
-        let Document { inputs, settings, .. } = &*document;
-        match Model::assemble(inputs, &settings.model_settings()) {
-            Ok(model) => begin(board, post, generation, Arc::new(model), settings),
+        match assembler.assemble(&document) {
+            Ok(assembled) => begin(board, post, generation, assembled, &document.settings),
             Err(faults) => post.figures(generation, Figures::Faults(faults.0)),
         }
     }
 }
 
-fn begin(board: &Board, post: &Post, generation: u64, model: Arc<Model>, settings: &Settings) {
+fn begin(board: &Board, post: &Post, generation: u64, assembled: Assembled, settings: &Settings) {
+    let Assembled { model, fit, fitted } = assembled;
+    let model = Arc::new(model);
     let days = kept_days(settings.paths, settings.horizon_days, MEMORY_BUDGET_BYTES);
     let plan = Plan {
         paths: settings.paths,
@@ -36,7 +37,7 @@ fn begin(board: &Board, post: &Post, generation: u64, model: Arc<Model>, setting
     let has_all_days = days.len() == settings.horizon_days as usize;
     post.figures(
         generation,
-        Figures::Model { model: Arc::clone(&model), days: Arc::new(days), has_all_days },
+        Figures::Model { model: Arc::clone(&model), fit, fitted, days: Arc::new(days), has_all_days },
     );
     board.begin(&Arc::new(Job { generation, model, plan }));
 }

@@ -2,8 +2,9 @@
 
 use super::request::Opened;
 use crate::opening::{self, Parts};
-use crate::workspace::{Document, Settings, is_workspace, read};
-use ebbmark_engine::factors::{Inputs, Model};
+use crate::workspace::{BookHistory, Document, Settings, is_workspace, read};
+use ebbmark_engine::factors::Inputs;
+use ebbmark_engine::fit::FitSettings;
 use ebbmark_engine::tables::{Fault, Faults, Place};
 use std::path::{Path, PathBuf};
 use std::sync::Arc;
@@ -54,14 +55,13 @@ fn open_parts(parts: Parts, current: &Document) -> Result<Opened, Faults> {
 /// Whether a document makes a valid model, in whichever of its currencies: where only the book's currency is left to be
 /// said, the window asks for it.
 fn check(document: &Document) -> Result<(), Faults> {
-    let Document { inputs, settings, .. } = document;
-    let mut settings = settings.model_settings();
-    let Err(faults) = Model::assemble(inputs, &settings) else { return Ok(()) };
+    let Err(faults) = document.assemble() else { return Ok(()) };
+    let mut in_currency = document.clone();
     let is_valid_in = |currency: &String| {
-        settings.book_currency = Some(currency.clone());
-        Model::assemble(inputs, &settings).is_ok()
+        in_currency.settings.book_currency = Some(currency.clone());
+        in_currency.assemble().is_ok()
     };
-    let mut named = inputs.holdings.iter().filter_map(|holding| holding.currency.as_ref());
+    let mut named = document.inputs.holdings.iter().filter_map(|holding| holding.currency.as_ref());
     if document.settings.book_currency.is_none() && named.any(is_valid_in) { Ok(()) } else { Err(faults) }
 }
 
@@ -85,8 +85,17 @@ fn joined(parts: Parts, current: &Document) -> Opened {
     }
     let document = Document {
         inputs: Arc::new(inputs),
+        history: joined_history(parts.history, current),
         holidays: parts.holidays.map(Arc::new).or_else(|| current.holidays.clone()),
         ..current.clone()
     };
     Opened { document, view: None, file: None, notices: parts.notices }
+}
+
+/// A new history is fitted as the one before was, but over all its dates.
+fn joined_history(opened: Option<opening::OpenedHistory>, current: &Document) -> Option<BookHistory> {
+    let before = current.history.as_ref();
+    let Some(opened) = opened else { return before.cloned() };
+    let usual = before.map_or_else(FitSettings::usual, |before| before.settings.clone());
+    Some(BookHistory::of(opened, FitSettings { since: None, until: None, row_days: None, ..usual }))
 }

@@ -4,7 +4,8 @@ use crate::desk::commands::{ExportKind, PathPurpose};
 use crate::desk::notices::Refusal;
 use crate::desk::session::AtLine;
 use crate::workspace::{Document, Kept, View, Workspace};
-use ebbmark_engine::factors::Model;
+use ebbmark_engine::factors::{Fitted, Model};
+use ebbmark_engine::fit::Fit;
 use ebbmark_engine::measures::{Bands, Conventions};
 use ebbmark_engine::tables::{Fault, Notice};
 use std::path::PathBuf;
@@ -122,6 +123,10 @@ pub enum Figures {
     Model {
         /// The model.
         model: Arc<Model>,
+        /// The fit of its history, where there is one.
+        fit: Option<Arc<Fit>>,
+        /// What the model took of it.
+        fitted: Option<Arc<Fitted>>,
         /// Days on which the line can stop.
         days: Arc<Vec<u32>>,
         /// Whether the memory budget allowed every day.

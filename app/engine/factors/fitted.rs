@@ -1,7 +1,7 @@
 //! What a history gives a book: figures for what nobody typed. How they were fitted is the fit's business; that what is
 //! typed stands above them is the model's.
 
-use super::{CorrelationTable, Diffusion};
+use super::{CorrelationTable, Diffusion, RiskFactor};
 use crate::book::{DiffusionKind, HalfLife};
 use crate::tables::Notice;
 use jiff::civil::Date;
@@ -39,6 +39,17 @@ pub struct FittedFactor {
     pub observations: usize,
     /// The chosen diffusion with its parameters; none where it was refused.
     pub diffusion: Option<Diffusion>,
+}
+
+/// Which history stands behind a model's fitted figures.
+#[derive(Debug, Clone, PartialEq)]
+pub struct HistorySource {
+    /// Label of the history.
+    pub label: String,
+    /// First and last date used.
+    pub dates: (Date, Date),
+    /// How the correlation was estimated, in words; none where all of it is typed.
+    pub estimator: Option<String>,
 }
 
 /// Where a parameter came from.
@@ -85,6 +96,16 @@ impl Fitted {
     /// What the history gives a factor.
     pub fn factor(&self, name: &str) -> Option<&FittedFactor> {
         self.factors.iter().find(|factor| factor.name == name)
+    }
+
+    /// Itself in short, for a model of these factors; the correlation counts where the typed one leaves a pair to it.
+    pub(super) fn source(&self, factors: &[RiskFactor], typed: Option<&CorrelationTable>) -> HistorySource {
+        let is_typed = |name: &String| typed.is_some_and(|table| table.names.contains(name));
+        let fitted = self.correlation.as_ref().map_or([].as_slice(), |table| table.names.as_slice());
+        let is_left = |factor: &RiskFactor| fitted.contains(&factor.name) && !is_typed(&factor.name);
+        let has_pair = fitted.len() > 1 && factors.iter().any(is_left);
+        let estimator = has_pair.then(|| self.estimator.clone());
+        HistorySource { label: self.label.clone(), dates: self.dates, estimator }
     }
 }
 

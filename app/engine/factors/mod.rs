@@ -26,7 +26,7 @@ mod pairing;
 pub use correlation::{Correlation, CorrelationError};
 pub use currencies::inverse_rate;
 pub use diffusion::{Diffusion, RiskFactor};
-pub use fitted::{Fitted, FittedFactor, Origin, Origins, TypedFactor};
+pub use fitted::{Fitted, FittedFactor, HistorySource, Origin, Origins, TypedFactor};
 pub use inputs::{CorrelationTable, FactorRow, FileLabels, Inputs};
 pub use model::{Model, ModelHolding, ModelSettings, typed_factors};
 pub use read_correlation::read_correlation;

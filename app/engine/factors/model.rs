@@ -2,7 +2,7 @@
 
 use super::descriptions::{self, Described};
 use super::parts::{self, Pricing};
-use super::{Correlation, CurrencyPart, Fitted, Inputs, RiskFactor, TypedFactor, Valuation};
+use super::{Correlation, CurrencyPart, Fitted, HistorySource, Inputs, RiskFactor, TypedFactor, Valuation};
 use super::{currencies, pairing, resolution};
 use crate::tables::{Fault, Faults, Notice, NoticeLevel, Place};
 
@@ -47,6 +47,8 @@ pub struct Model {
     pub valuation: Valuation,
     /// The book's value today.
     pub value: f64,
+    /// The history behind what nobody typed; none without one.
+    pub history: Option<HistorySource>,
     /// What is worth telling about it.
     pub notices: Vec<Notice>,
 }
@@ -78,6 +80,7 @@ impl Model {
         let (described, mut faults) = descriptions::gather(inputs, fitted, currency.as_deref());
         let mut notices: Vec<Notice> = described.iter().filter_map(inversion).collect();
         notices.extend(described.iter().flat_map(|said| said.notices.iter().cloned()));
+        notices.extend(fitted.iter().flat_map(|fitted| fitted.notices.iter().cloned()));
         let mut factors = Vec::with_capacity(described.len());
         for said in &described {
             let known = fitted.and_then(|fitted| fitted.factor(&said.name));
@@ -104,7 +107,18 @@ impl Model {
         let is_log: Vec<bool> = factors.iter().map(|factor| factor.diffusion.is_log()).collect();
         let value = valuation.value(&is_log, &vec![0.0; factors.len()], 0.0);
         let days_per_year = settings.days_per_year;
-        Ok(Self { currency, days_per_year, factors, correlation, holdings, valuation, value, notices })
+        let history = fitted.map(|fitted| fitted.source(&factors, inputs.correlation.as_ref()));
+        Ok(Self {
+            currency,
+            days_per_year,
+            factors,
+            correlation,
+            holdings,
+            valuation,
+            value,
+            history,
+            notices,
+        })
     }
 
     /// Years from today to a day.

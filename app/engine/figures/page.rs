@@ -93,13 +93,45 @@ fn foot(subject: &Subject<'_>) -> Vec<String> {
         LossFrom::Today => "losses count from today's value",
         LossFrom::Mean => "losses count from the expected value",
     };
-    vec![
-        format!("Model: {factors}; exact joint transition, daily steps; read at {}.", days_words(subject.day)),
+    let model = format!(
+        "Model: {factors}; exact joint transition, daily steps; read at {}.",
+        days_words(subject.day)
+    );
+    let mut lines = vec![model];
+    lines.extend(origins(subject));
+    lines.extend([
         format!("Run: {paths}; {prices}; {reference}."),
         "Assumed: normal shocks, constant volatility, holdings unchanged, no flows. Ranges are 95 % simulation ranges."
             .to_owned(),
         CAUTION.to_owned(),
-    ]
+    ]);
+    lines
+}
+
+/// "Parameters: 12 of 15 factors fitted on 30 Nov 2023 to 30 Nov 2026 (history.csv), the rest typed; correlation: …".
+fn origins(subject: &Subject<'_>) -> Option<String> {
+    let history = subject.model.history.as_ref()?;
+    let factors = &subject.model.factors;
+    let fitted = factors.iter().filter(|factor| factor.origins.has_fitted()).count();
+    let (from, to) = history.dates;
+    let count = if fitted == factors.len() {
+        "all factors".to_owned()
+    } else {
+        format!("{fitted} of {} factors", factors.len())
+    };
+    let rest = if fitted == factors.len() { "" } else { ", the rest typed" };
+    let correlation = history.estimator.as_ref().map_or("typed", String::as_str);
+    Some(format!(
+        "Parameters: {count} fitted on {} to {} ({}){rest}; correlation: {correlation}.",
+        date_words(from),
+        date_words(to),
+        file_name(&history.label)
+    ))
+}
+
+/// The last part of a path; on paper nobody needs the rest.
+fn file_name(label: &str) -> &str {
+    label.rsplit(['/', '\\']).next().unwrap_or(label)
 }
 
 /// "30 Nov 2026".

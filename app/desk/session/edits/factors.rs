@@ -5,7 +5,7 @@ use super::holdings::{factor_of, set_level};
 use super::{correlation, finite};
 use crate::desk::commands::Parameter;
 use ebbmark_engine::book::{Description, DiffusionKind, HalfLife, Kind, TypedFigure};
-use ebbmark_engine::factors::{Diffusion, FactorRow, Inputs, Model, RiskFactor};
+use ebbmark_engine::factors::{Diffusion, FactorRow, Inputs, Model, Origin, RiskFactor};
 
 /// Half-life a factor is given when it first reverts, trading days: a quarter of a year, to be changed by the reader.
 const FIRST_HALF_LIFE_DAYS: f64 = 63.0;
@@ -15,11 +15,22 @@ const FIRST_HALF_LIFE_DAYS: f64 = 63.0;
 pub fn set_diffusion(inputs: &mut Inputs, model: Option<&Model>, factor: &str, kind: DiffusionKind) {
     straighten(inputs, model, factor);
     let known = factor_in(model, factor).cloned();
+    if known.as_ref().is_some_and(|known| known.origins.has_fitted()) {
+        return take_fitted(inputs, model, factor, kind);
+    }
     let description = description_mut(inputs, factor);
     description.diffusion = Some(kind);
     if let Some(known) = known {
         carry_over(description, &known, kind);
     }
+}
+
+/// Leaves a factor's parameters to the fit of one kind; a typed drift of a geometric factor stays.
+pub fn take_fitted(inputs: &mut Inputs, model: Option<&Model>, factor: &str, kind: DiffusionKind) {
+    straighten(inputs, model, factor);
+    let description = description_mut(inputs, factor);
+    let drift = description.drift.filter(|_| kind == DiffusionKind::Geometric);
+    *description = Description { diffusion: Some(kind), drift, ..Description::default() };
 }
 
 fn carry_over(description: &mut Description, factor: &RiskFactor, kind: DiffusionKind) {
@@ -50,6 +61,7 @@ pub fn set_parameter(
     parameter: Parameter,
 ) -> Option<()> {
     straighten(inputs, model, factor);
+    pin_fitted_diffusion(inputs, model, factor);
     let is_log = is_log(inputs, model, factor);
     let figure = |value| if is_log { percent(value) } else { bare(value) };
     match parameter {
@@ -64,6 +76,14 @@ pub fn set_parameter(
         Parameter::HalfLife(half_life) => description_mut(inputs, factor).half_life = Some(half_life),
     }
     Some(())
+}
+
+/// A parameter is typed for the diffusion that the history chose: that is typed with it, so that it stays.
+fn pin_fitted_diffusion(inputs: &mut Inputs, model: Option<&Model>, factor: &str) {
+    let known = factor_in(model, factor).filter(|known| known.origins.diffusion == Origin::Fitted);
+    if let Some(kind) = known.map(|known| known.diffusion.kind()) {
+        description_mut(inputs, factor).diffusion.get_or_insert(kind);
+    }
 }
 
 /// Whether the factor's diffusion, as the inputs now say, is one of the log models.

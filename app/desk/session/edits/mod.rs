@@ -4,6 +4,8 @@
 pub mod correlation;
 /// Diffusions and their parameters.
 pub mod factors;
+/// How the history is fitted.
+pub mod history;
 /// Holdings and their sensitivities.
 pub mod holdings;
 /// Settings.
@@ -20,6 +22,8 @@ pub fn edited(document: &Document, model: Option<&Model>, command: &Command) -> 
     let mut new = document.clone();
     match command {
         Command::RenameBook(name) => new.name.clone_from(name),
+        Command::ChangeFit(change) => history::change(&mut new.history.as_mut()?.settings, *change)?,
+        Command::LeaveHistory => drop(new.history.take()?),
         Command::ChangeSetting(change) => settings::change(&mut new.settings, change)?,
         other => {
             edit_inputs(Arc::make_mut(&mut new.inputs), model, other)?;
@@ -37,6 +41,9 @@ fn edit_inputs(inputs: &mut Inputs, model: Option<&Model>, command: &Command) ->
         Command::ChangeHolding { row, change } => holdings::change(inputs, *row, change)?,
         Command::SetExposure { row, money } => {
             inputs.exposures.get_mut(*row)?.money = finite(*money)?;
+        }
+        Command::TakeDiffusion { factors, kind } => {
+            factors.iter().for_each(|factor| factors::take_fitted(inputs, model, factor, *kind));
         }
         Command::SetDiffusion { factor, kind } => factors::set_diffusion(inputs, model, factor, *kind),
         Command::SetParameter { factor, parameter } => {

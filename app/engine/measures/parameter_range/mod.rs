@@ -18,6 +18,11 @@ use rayon::prelude::*;
 use serde::Serialize;
 use std::sync::atomic::{AtomicUsize, Ordering};
 
+/// Histories usually simulated.
+pub const USUAL_DRAWS: usize = 200;
+/// Paths that a reading under one of them usually rests on: readings share their random numbers, so that few will do.
+pub const USUAL_PATHS: usize = 20_000;
+
 /// VaR and ES over the fit's 95 % parameter range.
 ///
 /// Histories are simulated from the fit on the dates and with the blanks of the real one, all factors jointly; each is
