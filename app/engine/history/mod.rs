@@ -12,7 +12,7 @@ pub mod spacing;
 /// What looks odd in a history.
 pub mod blemishes;
 
-pub use blemishes::{Blemish, blemishes};
+pub use blemishes::{Blemish, BlemishKind, Jump, blemishes};
 pub use calendar::{date_after, read_holidays};
 pub use prices::{History, Series};
 pub use read_history::read_history;

@@ -1,6 +1,7 @@
 //! From the text of files to a model: what is read, what is refused and where, and what two ways of writing the same
 //! book have in common.
 
+mod blemishes;
 mod cells;
 mod currencies;
 mod correlations;
