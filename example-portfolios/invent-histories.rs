@@ -143,7 +143,10 @@ fn model_of(truth: &Table, columns: &[Column], correlation: &str) -> Result<Mode
         ..Inputs::default()
     };
     let book_currency = Some("EUR".to_owned());
-    Model::assemble(&inputs, &ModelSettings { book_currency, days_per_year: DAYS_PER_YEAR })
+    Model::assemble(
+        &inputs,
+        &ModelSettings { book_currency, days_per_year: DAYS_PER_YEAR, repairs_correlation: false },
+    )
 }
 
 /// Moves of the modelled variables since today, a row per day, nought on the last.

@@ -153,7 +153,7 @@ pub struct SettingArguments {
     /// Loss from today's value whose chance of being passed is wanted, in money of the book's currency
     #[arg(long, value_name = "MONEY", value_parser = parse_positive)]
     pub loss_limit: Option<f64>,
-    /// Accepted; an impossible correlation matrix is still refused
+    /// Take the nearest valid correlation matrix where the one given is impossible, and name what it changes most
     #[arg(long)]
     pub repair: bool,
 }

@@ -69,6 +69,7 @@ pub(super) fn apply(arguments: &SettingArguments, document: &mut Document) {
     put(&mut settings.paths, arguments.paths.map(|paths| paths as usize));
     put(&mut settings.seed, arguments.seed);
     put(&mut settings.days_per_year, arguments.days_per_year);
+    settings.repairs_correlation |= arguments.repair;
     put(&mut settings.loss_from, arguments.loss_from.map(LossFrom::from));
     put(&mut settings.as_of, arguments.as_of.map(Some));
     put(&mut settings.book_currency, arguments.book_currency.clone().map(Some));

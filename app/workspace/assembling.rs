@@ -1,7 +1,7 @@
 //! From a document to its model: the history fitted where there is one, and its figures put where nobody typed any.
 
 use super::Document;
-use ebbmark_engine::factors::{Fitted, Model, TypedFactor, typed_factors};
+use ebbmark_engine::factors::{Fitted, Model, Repair, TypedFactor, typed_factors};
 use ebbmark_engine::fit::{Fit, FitSettings};
 use ebbmark_engine::history::History;
 use ebbmark_engine::tables::{Faults, Notice, NoticeLevel};
@@ -62,6 +62,13 @@ impl Assembler {
         let mut model = Model::assemble_fitted(&document.inputs, fitted.as_deref(), &settings)?;
         model.notices.extend(document.notice_of_lost_history());
         Ok(Assembled { model, fit, fitted })
+    }
+
+    /// The repair that would make a model of a document whose correlation is all that is wrong.
+    pub fn repair_offered(&mut self, document: &Document) -> Option<Repair> {
+        let mut repaired = document.clone();
+        repaired.settings.repairs_correlation = true;
+        self.assemble(&repaired).ok()?.model.repair
     }
 
     fn fitted(&mut self, document: &Document) -> Result<(Option<Arc<Fit>>, Option<Arc<Fitted>>), Faults> {

@@ -39,6 +39,8 @@ pub struct Settings {
     pub book_currency: Option<String>,
     /// Trading days in a year, above 0.
     pub days_per_year: f64,
+    /// Whether an impossible correlation matrix is taken as the nearest valid one.
+    pub repairs_correlation: bool,
     /// Date of the prices.
     pub as_of: Option<Date>,
     /// Base of every percentage, in money of the book's currency; today's value when none.
@@ -77,7 +79,14 @@ impl Document {
     /// how it is read is taken over from `before`.
     pub fn of_book(book: Opened, before: &Settings) -> (Self, Vec<Notice>) {
         let Opened { name, inputs, history, holidays, book_currency, as_of, notices } = book;
-        let settings = Settings { book_currency, as_of, capital: None, loss_limit: None, ..before.clone() };
+        let settings = Settings {
+            book_currency,
+            as_of,
+            capital: None,
+            loss_limit: None,
+            repairs_correlation: false,
+            ..before.clone()
+        };
         let holidays = holidays.map(Arc::new);
         let history = history.map(|history| BookHistory::of(history, FitSettings::usual()));
         (Self { name, inputs: Arc::new(inputs), history, holidays, settings }, notices)
@@ -90,6 +99,7 @@ impl Settings {
         Self {
             book_currency: None,
             days_per_year: 252.0,
+            repairs_correlation: false,
             as_of: None,
             capital: None,
             loss_limit: None,
@@ -114,7 +124,11 @@ impl Settings {
 
     /// What the model needs of these settings.
     pub fn model_settings(&self) -> ModelSettings {
-        ModelSettings { book_currency: self.book_currency.clone(), days_per_year: self.days_per_year }
+        ModelSettings {
+            book_currency: self.book_currency.clone(),
+            days_per_year: self.days_per_year,
+            repairs_correlation: self.repairs_correlation,
+        }
     }
 
     /// Base of percentages for a book worth `value`: the capital set, else a positive value, else none.

@@ -81,6 +81,8 @@ struct KeptText {
 struct SettingsText {
     book_currency: Option<String>,
     days_per_year: f64,
+    #[serde(default)]
+    repairs_correlation: bool,
     as_of: Option<Date>,
     capital: Option<f64>,
     loss_limit: Option<f64>,
@@ -214,6 +216,7 @@ impl SettingsText {
         Self {
             book_currency: settings.book_currency.clone(),
             days_per_year: settings.days_per_year,
+            repairs_correlation: settings.repairs_correlation,
             as_of: settings.as_of,
             capital: settings.capital,
             loss_limit: settings.loss_limit,
@@ -248,6 +251,7 @@ impl SettingsText {
         Ok(Settings {
             book_currency: self.book_currency,
             days_per_year: self.days_per_year,
+            repairs_correlation: self.repairs_correlation,
             as_of: self.as_of,
             capital: self.capital,
             loss_limit: self.loss_limit,

@@ -28,7 +28,7 @@ pub use history::BookHistory;
 pub use recovery::{Beginning, Slot, state_folder};
 pub use soundness::{check_fitted, check_rows};
 use std::path::PathBuf;
-pub use view::{BookColumn, BookOrder, Tab, Theme, View};
+pub use view::{BookColumn, BookOrder, MatrixOrder, Tab, Theme, View};
 pub use whole::write_whole;
 
 /// Everything needed to see the same figures again.

@@ -26,6 +26,19 @@ pub enum Theme {
     Dark,
 }
 
+/// How the factors of the correlation matrix stand.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Default, Serialize, Deserialize)]
+#[serde(rename_all = "kebab-case")]
+pub enum MatrixOrder {
+    /// As in the book.
+    #[default]
+    Book,
+    /// By the group of the first holding that each drives.
+    Group,
+    /// Like beside like, by clustering.
+    Closeness,
+}
+
 /// A column of the book that it can be sorted by.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Serialize, Deserialize)]
 #[serde(rename_all = "kebab-case")]
@@ -61,6 +74,8 @@ pub struct View {
     pub holding: Option<String>,
     /// Chosen cell of the correlation matrix, by the two factors' names.
     pub cell: Option<(String, String)>,
+    /// How the factors of the correlation matrix stand.
+    pub matrix_order: MatrixOrder,
     /// Factors marked in the fit, by name.
     pub marked: Vec<String>,
     /// Column that the book is sorted by.

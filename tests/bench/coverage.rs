@@ -47,6 +47,7 @@ fn model(diffusion: Diffusion, weight: f64, value: f64) -> Model {
             parts: vec![CurrencyPart { rate: None, constant: 0.0, income_per_year: 0.0, terms }],
         },
         value,
+        repair: None,
         history: None,
         notices: vec![],
     }

@@ -46,6 +46,7 @@ fn model() -> Model {
         holdings: vec![],
         valuation: Valuation { parts },
         value: 7e7,
+        repair: None,
         history: None,
         notices: vec![],
     }

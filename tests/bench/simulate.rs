@@ -45,6 +45,7 @@ fn book(n: usize, reverting: usize) -> Model {
         holdings: Vec::new(),
         valuation: Valuation { parts: vec![part] },
         value: n as f64 * WEIGHT,
+        repair: None,
         history: None,
         notices: Vec::new(),
     }

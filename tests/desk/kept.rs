@@ -5,8 +5,8 @@ use ebbmark::workspace::format::{
     FormatError, kept_of_text, text_of_kept, text_of_workspace, workspace_of_text,
 };
 use ebbmark::workspace::{
-    Beginning, BookColumn, BookOrder, Document, Kept, Settings, Slot, Tab, Theme, View, Workspace, read,
-    write, write_whole,
+    Beginning, BookColumn, BookOrder, Document, Kept, MatrixOrder, Settings, Slot, Tab, Theme, View,
+    Workspace, read, write, write_whole,
 };
 use ebbmark_engine::measures::LossFrom;
 use jiff::civil::date;
@@ -18,6 +18,7 @@ fn workspace() -> Workspace {
     let settings = Settings {
         book_currency: Some("EUR".to_owned()),
         days_per_year: 250.0,
+        repairs_correlation: true,
         as_of: Some(date(2031, 3, 14)),
         capital: Some(1.0e6 / 3.0),
         loss_limit: Some(0.1),
@@ -35,6 +36,7 @@ fn workspace() -> Workspace {
         factor: Some("Rate".to_owned()),
         holding: Some("Harbour".to_owned()),
         cell: Some(("Harbour".to_owned(), "Rate".to_owned())),
+        matrix_order: MatrixOrder::Closeness,
         marked: vec!["Rate".to_owned()],
         order: Some(BookOrder { column: BookColumn::Value, is_ascending: false }),
         filter: "har".to_owned(),

@@ -96,6 +96,7 @@ pub(crate) fn model(
         holdings: vec![],
         valuation: Valuation { parts },
         value,
+        repair: None,
         history: None,
         notices: vec![],
     }

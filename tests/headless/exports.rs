@@ -29,7 +29,11 @@ impl Shown {
     fn altered(name: &str, alter: impl Fn(&mut Holding)) -> Self {
         let mut opened = built_in_example().unwrap();
         opened.inputs.holdings.iter_mut().for_each(alter);
-        let settings = ModelSettings { book_currency: opened.book_currency, days_per_year: 252.0 };
+        let settings = ModelSettings {
+            book_currency: opened.book_currency,
+            days_per_year: 252.0,
+            repairs_correlation: false,
+        };
         let model = Model::assemble(&opened.inputs, &settings).unwrap();
         let loss_limit = Some(6.5e6);
         let kept_days: Vec<u32> = (1..=126).collect();

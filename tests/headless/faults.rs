@@ -44,18 +44,24 @@ fn exact_faults_of_all_files_are_listed() {
 }
 
 #[test]
-fn exact_impossible_correlation_is_refused_with_and_without_repair() {
+fn exact_impossible_correlation_is_refused_unless_it_may_be_repaired() {
     let shares = "name,quantity,price,volatility\nA,1,50,20%\nB,1,50,20%\nC,1,50,20%\n";
     let positions = write("faults", "three.csv", shares);
     // Eigenvalues 1 + 0.9, 1 + 0.9 and 1 - 1.8.
     let matrix = ",A,B,C\nA,1,-0.9,-0.9\nB,-0.9,1,-0.9\nC,-0.9,-0.9,1\n";
     let correlation = write("faults", "impossible.csv", matrix);
-    for repair in [&[][..], &["--repair"]] {
-        let line = [&["read", "--positions", &positions, "--correlation", &correlation], repair].concat();
-        let call = call(&line);
-        assert_eq!((call.code, call.out.as_str()), (2, ""));
-        assert!(call.err.contains("-0.8000"), "{}", call.err);
-    }
+    let line = ["read", "--positions", &positions, "--correlation", &correlation];
+    let refused = call(&line);
+    assert_eq!((refused.code, refused.out.as_str()), (2, ""));
+    assert!(refused.err.contains("-0.8000") && refused.err.contains("--repair"), "{}", refused.err);
+    // Three equal correlations of three factors can't be below -1/2, and by symmetry that is the nearest.
+    let repaired = call(&[&line[..], &["--repair"]].concat());
+    assert_eq!(repaired.code, 0, "{}", repaired.err);
+    assert!(
+        repaired.err.contains("A and B -0.900 to -0.500")
+            || repaired.err.contains("B and A -0.900 to -0.500")
+    );
+    assert!(repaired.err.contains("-0.8000"), "{}", repaired.err);
 }
 
 #[test]

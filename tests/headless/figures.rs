@@ -25,7 +25,8 @@ fn always_another_seed_is_another_sample() {
 #[test]
 fn agree_horizon_and_longer_run_read_at_that_day() {
     let inputs: Inputs = ebbmark::opening::built_in_example().unwrap().inputs;
-    let settings = ModelSettings { book_currency: Some("EUR".into()), days_per_year: 252.0 };
+    let settings =
+        ModelSettings { book_currency: Some("EUR".into()), days_per_year: 252.0, repairs_correlation: false };
     let model = Model::assemble(&inputs, &settings).unwrap();
     let loss_limit = Some(4e6);
     let plan = Plan { paths: 2000, seed: 1, kept_days: (1..=63).collect(), loss_limit, threads: None };

@@ -7,6 +7,7 @@ mod examples;
 mod exports;
 mod faults;
 mod figures;
+mod fit;
 mod no_display;
 mod options;
 mod schema;

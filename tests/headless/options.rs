@@ -45,27 +45,38 @@ fn exact_files_of_one_book_go_together() {
 }
 
 #[test]
+fn exact_options_of_a_fit_need_a_history() {
+    let share = write("options", "alone.csv", ONE_SHARE);
+    for option in [
+        &["--estimator", "weighted"][..],
+        &["--parameter-range"],
+        &["--drift", "fitted"],
+        &["--model", "log"],
+    ] {
+        let call = call(&[&["read", "--positions", &share], option].concat());
+        assert_eq!(call.code, 2, "{option:?}");
+        assert!(call.err.contains("--history"), "{}", call.err);
+    }
+    for option in [
+        &["--change-days", "3"][..],
+        &["--estimator", "best"],
+        &["--row-days", "0"],
+        &["--weight-half-life", "0"],
+    ] {
+        assert_eq!(call(&[&["fit"], option].concat()).code, 2, "{option:?}");
+    }
+}
+
+#[test]
 fn exact_what_later_versions_do_is_answered_not_yet() {
     for line in [
-        &["fit", "--history", "h.csv"][..],
-        &["stress"],
+        &["stress"][..],
         &["stress", "--reach", "5000000", "--dial", "volatility"],
         &["backtest", "--history", "h.csv"],
         &["report", "--out", "folder"],
-        &["read", "--history", "h.csv"],
         &["read", "--limits", "l.csv"],
         &["read", "--against", "a.csv"],
         &["read", "--read-as", "relative"],
-        &["read", "--parameter-range"],
-        &["read", "--estimator", "sample"],
-        &["read", "--weight-half-life", "60"],
-        &["read", "--change-days", "5"],
-        &["read", "--since", "2020-01-01"],
-        &["read", "--until", "2021-01-01"],
-        &["read", "--row-days", "21"],
-        &["read", "--model", "log"],
-        &["read", "--missing", "pairs"],
-        &["read", "--drift", "fitted"],
     ] {
         let call = call(line);
         assert_eq!((call.code, call.out.as_str()), (2, ""), "{line:?}");

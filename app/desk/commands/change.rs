@@ -75,6 +75,8 @@ pub enum SettingChange {
     BookCurrency(Option<String>),
     /// Trading days in a year.
     DaysPerYear(f64),
+    /// Whether an impossible correlation matrix is taken as the nearest valid one.
+    RepairsCorrelation(bool),
     /// Date of the prices.
     AsOf(Option<Date>),
     /// Base of percentages, money.

@@ -1,7 +1,7 @@
 //! The closed list of commands. Words, keys and effects live elsewhere.
 
 use super::{ExportKind, FitChange, HoldingChange, Parameter, PathPurpose, SettingChange};
-use crate::workspace::{BookColumn, Tab, Theme};
+use crate::workspace::{BookColumn, MatrixOrder, Tab, Theme};
 use ebbmark_engine::book::{DiffusionKind, Holding};
 use std::path::PathBuf;
 
@@ -102,6 +102,8 @@ pub enum Command {
         /// Factor of the column.
         column: String,
     },
+    /// Orders the correlation matrix.
+    OrderMatrix(MatrixOrder),
     /// Marks a factor in the fit, or takes the mark away.
     MarkFactor(String),
     /// Sorts the book by a column; the other way round when it is sorted by it already, then not at all.

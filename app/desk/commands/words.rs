@@ -1,7 +1,7 @@
 //! Words of the commands: on buttons, in tooltips, and beside undo and redo.
 
 use super::{Command, FitChange, HoldingChange, Parameter, PathPurpose, SettingChange, shortcuts};
-use crate::workspace::{Tab, Theme};
+use crate::workspace::{MatrixOrder, Tab, Theme};
 
 impl Command {
     /// Text on a button or in a menu; also what an undo step is called. "…" where it asks for more.
@@ -47,6 +47,9 @@ impl Command {
             Self::ShowTab(Tab::Horizon) => "Horizon",
             Self::ShowTab(Tab::Fit) => "Fit",
             Self::ShowTab(Tab::Correlation) => "Correlation",
+            Self::OrderMatrix(MatrixOrder::Book) => "As in the book",
+            Self::OrderMatrix(MatrixOrder::Group) => "By group",
+            Self::OrderMatrix(MatrixOrder::Closeness) => "Like beside like",
             Self::SortBook(_) => "Sort",
             Self::FilterBook(_) => "Filter",
             Self::WearTheme(Theme::Light) => "Light",
@@ -152,6 +155,8 @@ impl SettingChange {
         match self {
             Self::BookCurrency(_) => "Currency of the book",
             Self::DaysPerYear(_) => "Trading days in a year",
+            Self::RepairsCorrelation(true) => "Use the nearest valid matrix",
+            Self::RepairsCorrelation(false) => "Use the matrix as typed",
             Self::AsOf(_) => "Date of the prices",
             Self::Capital(_) => "Capital",
             Self::LossLimit(_) => "Loss limit",

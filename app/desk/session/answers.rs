@@ -67,8 +67,9 @@ impl Session {
                     self.live.fit = fit;
                     return requests;
                 }
-                Figures::Faults(faults) => {
+                Figures::Faults { faults, offer } => {
                     self.faults = faults;
+                    self.repair_offered = offer;
                     self.live.is_before_edit = self.live.model.is_some();
                     return Vec::new();
                 }
@@ -96,6 +97,7 @@ impl Session {
         has_all_days: bool,
     ) -> Vec<Request> {
         self.faults.clear();
+        self.repair_offered = None;
         let mut standing = model.notices.clone();
         if !has_all_days {
             standing.push(fewer_days_notice(&self.document.settings, days.len()));
@@ -131,7 +133,7 @@ impl Session {
                 live.state = RunState::Idle;
                 self.notices.tell_failure(sentence);
             }
-            Figures::Model { .. } | Figures::Faults(_) => {}
+            Figures::Model { .. } | Figures::Faults { .. } => {}
         }
         self.due_exports()
     }

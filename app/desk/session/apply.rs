@@ -232,7 +232,7 @@ fn needs_run(old: &Document, new: &Document) -> bool {
         (
             (settings.paths, settings.seed, settings.horizon_days),
             (settings.days_per_year, settings.loss_limit),
-            settings.book_currency.clone(),
+            (settings.book_currency.clone(), settings.repairs_correlation),
         )
     };
     old.inputs != new.inputs || old.history != new.history || of(&old.settings) != of(&new.settings)
@@ -249,6 +249,7 @@ fn changes_view(command: &Command) -> bool {
             | Command::ChooseFactor(_)
             | Command::ChooseHolding(_)
             | Command::ChooseCell { .. }
+            | Command::OrderMatrix(_)
             | Command::MarkFactor(_)
             | Command::SortBook(_)
             | Command::FilterBook(_)
@@ -278,6 +279,7 @@ fn change_view(view: &mut View, command: Command) {
             Some(at) => drop(view.marked.remove(at)),
             None => view.marked.push(name),
         },
+        Command::OrderMatrix(order) => view.matrix_order = order,
         Command::FilterBook(text) => view.filter = text,
         Command::WearTheme(theme) => view.theme = theme,
         Command::ToggleTheme => {

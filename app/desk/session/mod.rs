@@ -15,6 +15,7 @@ pub mod undo;
 use super::commands::{ExportKind, PathPurpose};
 use super::notices::{Notices, Refusal};
 use crate::workspace::{Document, Kept, View};
+use ebbmark_engine::factors::Repair;
 use ebbmark_engine::tables::Fault;
 pub use live::{AtLine, Live, RunState};
 use std::path::PathBuf;
@@ -31,6 +32,7 @@ pub struct Session {
     undo: UndoStack,
     live: Live,
     faults: Vec<Fault>,
+    repair_offered: Option<Arc<Repair>>,
     notices: Notices,
     refusal: Option<Refusal>,
     path_field: Option<PathPurpose>,
@@ -51,6 +53,7 @@ impl Session {
             undo: UndoStack::default(),
             live: Live::default(),
             faults: Vec::new(),
+            repair_offered: None,
             notices: Notices::default(),
             refusal: None,
             path_field: None,
@@ -77,6 +80,11 @@ impl Session {
     /// What is wrong with the inputs as they stand; then the live figures are from before the edit.
     pub fn faults(&self) -> &[Fault] {
         &self.faults
+    }
+
+    /// The repair that would make the inputs valid, where their correlation is all that is wrong.
+    pub fn repair_offered(&self) -> Option<&Repair> {
+        self.repair_offered.as_deref()
     }
 
     /// Where the reading line stands: the day nearest to the one set at which the paths can be read.

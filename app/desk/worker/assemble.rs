@@ -18,7 +18,10 @@ pub(super) fn serve(board: &Board, post: &Post) {
     while let Some((generation, document)) = board.wait_for(|state| state.to_assemble.take()) {
         match assembler.assemble(&document) {
             Ok(assembled) => begin(board, post, generation, assembled, &document.settings),
-            Err(faults) => post.figures(generation, Figures::Faults(faults.0)),
+            Err(faults) => {
+                let offer = assembler.repair_offered(&document).map(Arc::new);
+                post.figures(generation, Figures::Faults { faults: faults.0, offer });
+            }
         }
     }
 }

@@ -4,7 +4,7 @@ use crate::desk::commands::{ExportKind, PathPurpose};
 use crate::desk::notices::Refusal;
 use crate::desk::session::AtLine;
 use crate::workspace::{Document, Kept, View, Workspace};
-use ebbmark_engine::factors::{Fitted, Model};
+use ebbmark_engine::factors::{Fitted, Model, Repair};
 use ebbmark_engine::fit::Fit;
 use ebbmark_engine::measures::{Bands, Conventions};
 use ebbmark_engine::tables::{Fault, Notice};
@@ -133,7 +133,12 @@ pub enum Figures {
         has_all_days: bool,
     },
     /// The inputs are not a valid model; no run begins.
-    Faults(Vec<Fault>),
+    Faults {
+        /// Everything wrong with them.
+        faults: Vec<Fault>,
+        /// The repair that would make a model of them, where the correlation is all that is wrong.
+        offer: Option<Arc<Repair>>,
+    },
     /// Bands ahead.
     Bands(Arc<Bands>),
     /// Everything at the reading line.

@@ -13,6 +13,8 @@ pub mod diffusion;
 pub mod fitted;
 /// A valid correlation matrix.
 pub mod correlation;
+/// The nearest valid matrix.
+pub mod repair;
 /// The book's value as a function of the factors' moves.
 pub mod valuation;
 /// The checked whole.
@@ -31,4 +33,5 @@ pub use inputs::{CorrelationTable, FactorRow, FileLabels, Inputs};
 pub use model::{Model, ModelHolding, ModelSettings, typed_factors};
 pub use read_correlation::read_correlation;
 pub use read_factors::read_factors;
+pub use repair::{PairChange, Repair};
 pub use valuation::{CurrencyPart, CurrencyRate, Term, Valuation};

@@ -2,7 +2,9 @@
 
 use super::descriptions::{self, Described};
 use super::parts::{self, Pricing};
-use super::{Correlation, CurrencyPart, Fitted, HistorySource, Inputs, RiskFactor, TypedFactor, Valuation};
+use super::{
+    Correlation, CurrencyPart, Fitted, HistorySource, Inputs, Repair, RiskFactor, TypedFactor, Valuation,
+};
 use super::{currencies, pairing, resolution};
 use crate::tables::{Fault, Faults, Notice, NoticeLevel, Place};
 
@@ -13,6 +15,8 @@ pub struct ModelSettings {
     pub book_currency: Option<String>,
     /// Trading days in a year.
     pub days_per_year: f64,
+    /// Whether an impossible correlation matrix is taken as the nearest valid one.
+    pub repairs_correlation: bool,
 }
 
 /// A holding of a model.
@@ -41,6 +45,8 @@ pub struct Model {
     pub factors: Vec<RiskFactor>,
     /// Of the factors' Brownian motions, in the factors' order.
     pub correlation: Correlation,
+    /// What made it valid, where it was not.
+    pub repair: Option<Repair>,
     /// In order of the positions.
     pub holdings: Vec<ModelHolding>,
     /// The book's value as a function of the factors' moves.
@@ -93,8 +99,9 @@ impl Model {
             return Err(Faults(faults));
         }
         let pricing = Pricing { inputs, factors: &factors, book_currency: currency.as_deref() };
-        let correlation = pairing::pair_up(inputs, fitted, &factors, &mut notices);
-        let (holdings, correlation) = match (pricing.holdings(), correlation) {
+        let correlation =
+            pairing::pair_up(inputs, fitted, &factors, settings.repairs_correlation, &mut notices);
+        let (holdings, (correlation, repair)) = match (pricing.holdings(), correlation) {
             (Ok(holdings), Ok(correlation)) => (holdings, correlation),
             (holdings, correlation) => {
                 let faults =
@@ -113,6 +120,7 @@ impl Model {
             days_per_year,
             factors,
             correlation,
+            repair,
             holdings,
             valuation,
             value,

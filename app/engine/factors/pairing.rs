@@ -1,16 +1,18 @@
 //! From a correlation file to the correlation of a model's factors: names found, rates turned, what is missing told.
 
 use super::currencies::inverse_rate;
-use super::{Correlation, CorrelationTable, Fitted, Inputs, RiskFactor};
+use super::{Correlation, CorrelationTable, Fitted, Inputs, Repair, RiskFactor};
 use crate::tables::{Fault, Notice, NoticeLevel, Place};
 
-/// The correlation of these factors, in their order.
+/// The correlation of these factors, in their order, and the repair that made it where one did: typed pairs, else fitted
+/// ones. Where fitted pairs don't go with typed ones the fitted give way; typed ones only where `is_repaired` says so.
 pub(super) fn pair_up(
     inputs: &Inputs,
     fitted: Option<&Fitted>,
     factors: &[RiskFactor],
+    is_repaired: bool,
     notices: &mut Vec<Notice>,
-) -> Result<Correlation, Vec<Fault>> {
+) -> Result<(Correlation, Option<Repair>), Vec<Fault>> {
     let typed = inputs.correlation.as_ref();
     let fitted = fitted.and_then(|fitted| fitted.correlation.as_ref());
     if let Some(table) = typed {
@@ -19,24 +21,46 @@ pub(super) fn pair_up(
             return Err(faults);
         }
     }
-    let sources: Vec<Source<'_>> =
-        [typed, fitted].into_iter().flatten().map(|table| Source::of(table, factors)).collect();
-    notices.extend(unpaired(factors, &sources));
+    let [typed, fitted] = [typed, fitted].map(|table| table.map(|table| Source::of(table, factors)));
+    notices.extend(unpaired(factors, &[typed.as_ref(), fitted.as_ref()]));
     let n = factors.len();
-    let cells = (0..n * n).map(|cell| {
-        let (row, column) = (cell / n, cell % n);
-        let known = sources.iter().find_map(|source| source.at(row, column));
-        if row == column { 1.0 } else { known.unwrap_or(0.0) }
-    });
-    Correlation::new(n, cells.collect()).map_err(|error| {
-        let factor = &factors[error.factor].name;
-        let place =
-            Place { file: inputs.files.correlation.clone(), line: None, column: Some(factor.clone()) };
-        let eigenvalue = plain_decimal(error.smallest_eigenvalue);
-        let found = format!("a matrix that is not positive semi-definite (smallest eigenvalue {eigenvalue})");
-        let expected = format!("correlations that can hold together; it shows at {factor}");
-        vec![Fault { place, found, expected }]
-    })
+    let of =
+        |source: &Option<Source<'_>>, row, column| source.as_ref().and_then(|source| source.at(row, column));
+    let known = |row: usize, column: usize| of(&typed, row, column).or_else(|| of(&fitted, row, column));
+    let cells: Vec<f64> = (0..n * n)
+        .map(|cell| if cell % (n + 1) == 0 { 1.0 } else { known(cell / n, cell % n).unwrap_or(0.0) })
+        .collect();
+    let error = match Correlation::new(n, cells.clone()) {
+        Ok(correlation) => return Ok((correlation, None)),
+        Err(error) => error,
+    };
+    let held: Vec<(usize, usize)> = (0..n)
+        .flat_map(|row| (0..row).map(move |column| (row, column)))
+        .filter(|(row, column)| of(&typed, *row, *column).is_some())
+        .collect();
+    let names: Vec<&str> = factors.iter().map(|factor| factor.name.as_str()).collect();
+    let repair =
+        |held: &[(usize, usize)]| Repair::of(&names, &cells, error.smallest_eigenvalue, None, held).ok();
+    let has_fitted_pairs = fitted.is_some() && held.len() < n * (n - 1) / 2;
+    let by_fitted = if has_fitted_pairs { repair(&held) } else { None };
+    match by_fitted.or_else(|| if is_repaired { repair(&[]) } else { None }) {
+        Some(repair) => {
+            notices.push(Notice { level: NoticeLevel::Warning, text: repair.words() });
+            Ok((repair.correlation.clone(), Some(repair)))
+        }
+        None => Err(vec![impossible(inputs, &factors[error.factor].name, error.smallest_eigenvalue)]),
+    }
+}
+
+fn impossible(inputs: &Inputs, factor: &str, smallest_eigenvalue: f64) -> Fault {
+    let eigenvalue = plain_decimal(smallest_eigenvalue);
+    Fault {
+        place: Place { file: inputs.files.correlation.clone(), line: None, column: Some(factor.to_owned()) },
+        found: format!("a matrix that is not positive semi-definite (smallest eigenvalue {eigenvalue})"),
+        expected: format!(
+            "correlations that can hold together; it shows at {factor}; --repair takes the nearest valid matrix"
+        ),
+    }
 }
 
 /// A table of correlations, and where each factor of the model stands in it.
@@ -106,20 +130,21 @@ fn cell_place(inputs: &Inputs, table: &CorrelationTable, row: usize) -> Place {
 }
 
 /// Factors that no source pairs with any other.
-fn unpaired(factors: &[RiskFactor], sources: &[Source<'_>]) -> Option<Notice> {
-    let missing =
-        factors.iter().enumerate().filter(|(at, _)| sources.iter().all(|source| source.rows[*at].is_none()));
+fn unpaired(factors: &[RiskFactor], sources: &[Option<&Source<'_>>; 2]) -> Option<Notice> {
+    let is_lacking = |at: usize| sources.iter().flatten().all(|source| source.rows[at].is_none());
+    let missing = factors.iter().enumerate().filter(|(at, _)| is_lacking(*at));
     let names: Vec<&str> = missing.map(|(_, factor)| factor.name.as_str()).collect();
+    let names = names.join(", ");
     let text = match sources {
-        [] if factors.len() > 1 => {
+        [None, None] if factors.len() > 1 => {
             "No correlation is given: all factors are taken as uncorrelated.".to_owned()
         }
-        [] => return None,
+        [None, None] => return None,
         _ if names.is_empty() => return None,
-        _ => format!(
-            "Neither in the correlation file nor fitted, so taken as uncorrelated: {}.",
-            names.join(", ")
-        ),
+        [Some(_), None] => format!("Not in the correlation file, so taken as uncorrelated: {names}."),
+        _ => {
+            format!("Neither in the correlation file nor in the history, so taken as uncorrelated: {names}.")
+        }
     };
     Some(Notice { level: NoticeLevel::Warning, text })
 }

@@ -4,7 +4,7 @@
 use super::FactorFit;
 use crate::book::DiffusionKind;
 use crate::history::{History, Series, Spacing};
-use crate::maths::decay_integral;
+use crate::maths::{decay_integral, sample_moments};
 
 /// A factor with the diffusion that was chosen for it.
 #[derive(Debug, Clone, Copy)]
@@ -72,4 +72,28 @@ pub(super) fn span_years(
 ) -> Vec<f64> {
     let unit = spacing.years_per_unit(days_per_year);
     spans.iter().map(|(from, to)| f64::from(spacing.units_between(history, *from, *to)) * unit).collect()
+}
+
+/// Innovations of two movers on the dates that both have, each less its mean and over its standard deviation.
+pub(super) fn standard_pairs(
+    history: &History,
+    movers: [Mover<'_>; 2],
+    span: usize,
+    spacing: Spacing,
+    days_per_year: f64,
+) -> Vec<[f64; 2]> {
+    let spans = spans(&movers, history.dates.len(), span);
+    let years = span_years(history, &spans, spacing, days_per_year);
+    let [one, other] = movers.map(|mover| {
+        let moves: Vec<f64> = spans
+            .iter()
+            .zip(&years)
+            .filter_map(|((from, to), years)| mover.innovation(*from, *to, *years))
+            .collect();
+        let moments = sample_moments(&moves);
+        let (mean, sd) = (moments.mean.value, moments.sd.value);
+        moves.into_iter().map(|value| (value - mean) / sd).collect::<Vec<f64>>()
+    });
+    let pairs = one.into_iter().zip(other).map(|(one, other)| [one, other]);
+    pairs.filter(|pair| pair.iter().all(|value| value.is_finite())).collect()
 }

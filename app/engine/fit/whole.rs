@@ -1,7 +1,7 @@
 //! A whole history fitted: every factor under all three diffusions, and the correlation of those that were chosen.
 
 use super::correlation::{FittedCorrelation, Sample};
-use super::innovations::Mover;
+use super::innovations::{Mover, standard_pairs};
 use super::taking::{no_reversion, taken_speed};
 use super::{Estimator, FactorFit, FitSettings, Missing};
 use crate::factors::{TypedFactor, inverse_rate};
@@ -104,6 +104,20 @@ impl Fit {
     pub fn correlation_of(&self, one: &str, other: &str) -> f64 {
         let known = self.correlation.as_ref().and_then(|correlation| correlation.of(one, other));
         if one == other { 1.0 } else { known.unwrap_or(0.0) }
+    }
+
+    /// What moved two factors at the same times, beyond what their diffusions foretold, each in its own standard
+    /// deviations: the points that their correlation is read off. `history` and `settings` are those of the fit.
+    pub fn shocks_of(
+        &self,
+        history: &History,
+        settings: &FitSettings,
+        days_per_year: f64,
+        [one, other]: [&str; 2],
+    ) -> Vec<[f64; 2]> {
+        let mover = |name: &str| Mover::of(history.series(name)?, self.factor(name)?, 0.0);
+        let (Some(one), Some(other)) = (mover(one), mover(other)) else { return Vec::new() };
+        standard_pairs(history, [one, other], settings.change_days as usize, self.spacing, days_per_year)
     }
 
     /// Everything worth telling: what looks odd, then what the fit made of it.

@@ -4,6 +4,8 @@
 pub mod eigen;
 /// Cholesky factor of a semi-definite matrix.
 pub mod cholesky;
+/// Like beside like.
+pub mod clustering;
 /// Products of columns.
 pub mod gram;
 /// The nearest correlation matrix.
@@ -33,6 +35,7 @@ pub mod special;
 /// The largest values of a sample.
 pub mod tail;
 
+pub use clustering::leaf_order;
 pub use drawdown_law::{drawdown_cdf, drawdown_mean_beyond, drawdown_quantile};
 pub use eigen::symmetric_eigenvalues;
 pub use entry_range::entry_range;

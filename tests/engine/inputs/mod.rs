@@ -46,7 +46,10 @@ fn inputs(texts: Texts<'_>) -> Result<Inputs, Faults> {
 
 fn model(texts: Texts<'_>) -> Result<Model, Faults> {
     let book_currency = texts.currency.map(str::to_owned);
-    Model::assemble(&inputs(texts)?, &ModelSettings { book_currency, days_per_year: 252.0 })
+    Model::assemble(
+        &inputs(texts)?,
+        &ModelSettings { book_currency, days_per_year: 252.0, repairs_correlation: false },
+    )
 }
 
 /// A book of positions alone.

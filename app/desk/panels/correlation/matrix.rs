@@ -1,9 +1,10 @@
-//! The correlation matrix as the document has it, possible or not, in the order of the model's factors. Draws nothing.
+//! The correlation matrix as the document has it, possible or not, its factors in the order that the view asks for. Typed
+//! cells stand as typed, the others as the model has them; a repaired matrix as repaired. Draws nothing.
 
 use crate::desk::session::Session;
-use ebbmark_engine::factors::{CorrelationTable, RiskFactor};
-use ebbmark_engine::maths::eigen::symmetric_eigenvalues;
-use ebbmark_engine::maths::entry_range;
+use crate::workspace::MatrixOrder;
+use ebbmark_engine::factors::{CorrelationTable, Model, RiskFactor};
+use ebbmark_engine::maths::{entry_range, leaf_order, symmetric_eigenvalues};
 use egui::{Id, Ui};
 use std::ops::RangeInclusive;
 
@@ -13,21 +14,47 @@ pub const LEAST_EIGENVALUE: f64 = -1e-9;
 /// Names and correlations, both triangles.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Matrix<'a> {
-    /// Factors, in the model's order.
+    /// Factors, in the order of the view.
     pub names: Vec<&'a String>,
     /// n x n, row per factor.
     pub cells: Vec<f64>,
 }
 
 impl<'a> Matrix<'a> {
-    /// The document's matrix over the factors of the last valid model.
-    pub fn of(session: &'a Session) -> Option<Self> {
-        let factors = &session.live().model.as_deref()?.factors;
-        let table = session.document().inputs.correlation.as_ref();
-        let places: Vec<Option<Place>> = factors.iter().map(|factor| place(table, factor)).collect();
-        let size = factors.len();
-        let cells = (0..size * size).map(|at| entry(table, &places, at / size, at % size)).collect();
-        Some(Self { names: factors.iter().map(|factor| &factor.name).collect(), cells })
+    /// The matrix over the factors of the last valid model.
+    pub fn of(ui: &Ui, session: &'a Session) -> Option<Self> {
+        let model = session.live().model.as_deref()?;
+        let is_repaired = model.repair.is_some() && !session.live().is_before_edit;
+        let table = session.document().inputs.correlation.as_ref().filter(|_| !is_repaired);
+        let places: Vec<Option<Place>> = model.factors.iter().map(|factor| place(table, factor)).collect();
+        let size = model.factors.len();
+        let entry = |row, column| entry(table, &places, model, row, column);
+        let cells = (0..size * size).map(|at| entry(at / size, at % size)).collect();
+        let matrix = Self { names: model.factors.iter().map(|factor| &factor.name).collect(), cells };
+        Some(match session.view().matrix_order {
+            MatrixOrder::Book => matrix,
+            MatrixOrder::Group => matrix.in_order(&by_group(session, model)),
+            MatrixOrder::Closeness => {
+                let order = matrix.by_closeness(ui);
+                matrix.in_order(&order)
+            }
+        })
+    }
+
+    fn in_order(self, order: &[usize]) -> Self {
+        let size = self.size();
+        let cell = |at: usize| self.cells[order[at / size] * size + order[at % size]];
+        let cells = (0..size * size).map(cell).collect();
+        Self { names: order.iter().map(|at| self.names[*at]).collect(), cells }
+    }
+
+    /// Like beside like: distances `sqrt(2 (1 - rho))`, worked out once for a matrix.
+    fn by_closeness(&self, ui: &Ui) -> Vec<usize> {
+        remembered(ui, "order by closeness", &self.cells, || {
+            let distances: Vec<f64> =
+                self.cells.iter().map(|rho| (2.0 * (1.0 - rho)).max(0.0).sqrt()).collect();
+            leaf_order(self.size(), &distances)
+        })
     }
 
     /// Number of factors.
@@ -45,21 +72,48 @@ impl<'a> Matrix<'a> {
         entry_range(self.size(), &self.cells, row, column)
     }
 
-    /// Smallest eigenvalue, worked out once for a matrix.
-    pub fn smallest_eigenvalue(&self, ui: &Ui) -> f64 {
-        let key = Id::unique("smallest eigenvalue");
-        let known =
-            ui.data(|data| data.get_temp::<(Vec<f64>, f64)>(key)).filter(|(cells, _)| *cells == self.cells);
-        known.map_or_else(
-            || {
-                let eigenvalues = symmetric_eigenvalues(self.size(), &self.cells);
-                let smallest = eigenvalues.first().copied().unwrap_or(f64::NAN);
-                ui.data_mut(|data| data.insert_temp(key, (self.cells.clone(), smallest)));
-                smallest
-            },
-            |(_, smallest)| smallest,
-        )
+    /// Smallest and largest eigenvalue, worked out once for a matrix.
+    pub fn eigenvalue_ends(&self, ui: &Ui) -> (f64, f64) {
+        remembered(ui, "ends of the eigenvalues", &self.cells, || {
+            let eigenvalues = symmetric_eigenvalues(self.size(), &self.cells);
+            let end = |value: Option<&f64>| value.copied().unwrap_or(f64::NAN);
+            (end(eigenvalues.first()), end(eigenvalues.last()))
+        })
     }
+}
+
+/// What was worked out for these cells before, else what `work` makes of them.
+fn remembered<T: Clone + Send + Sync + 'static>(
+    ui: &Ui,
+    what: &str,
+    cells: &[f64],
+    work: impl FnOnce() -> T,
+) -> T {
+    let key = Id::unique(what);
+    let known = ui.data(|data| data.get_temp::<(Vec<f64>, T)>(key)).filter(|(known, _)| known == cells);
+    known.map_or_else(
+        || {
+            let made = work();
+            ui.data_mut(|data| data.insert_temp(key, (cells.to_vec(), made.clone())));
+            made
+        },
+        |(_, made)| made,
+    )
+}
+
+/// Factors by the group of the first holding that each drives, those of one group as in the book.
+fn by_group(session: &Session, model: &Model) -> Vec<usize> {
+    let holdings = &session.document().inputs.holdings;
+    let group = |factor: &RiskFactor| {
+        let driven =
+            holdings.iter().find(|holding| holding.factor.as_ref().unwrap_or(&holding.name) == &factor.name);
+        // Factors without a group of their own, currency rates among them, come last.
+        driven.map_or_else(|| "\u{10ffff}".to_owned(), |holding| holding.group.clone())
+    };
+    let groups: Vec<String> = model.factors.iter().map(group).collect();
+    let mut order: Vec<usize> = (0..groups.len()).collect();
+    order.sort_by(|one, other| groups[*one].cmp(&groups[*other]));
+    order
 }
 
 /// A factor's row in the table, and the sign of its shocks there.
@@ -80,15 +134,19 @@ fn place(table: Option<&CorrelationTable>, factor: &RiskFactor) -> Option<Place>
     straight.or_else(|| turned().map(|row| Place { row, sign: -1.0 }))
 }
 
-fn entry(table: Option<&CorrelationTable>, places: &[Option<Place>], row: usize, column: usize) -> f64 {
-    if row == column {
-        return 1.0;
-    }
+fn entry(
+    table: Option<&CorrelationTable>,
+    places: &[Option<Place>],
+    model: &Model,
+    row: usize,
+    column: usize,
+) -> f64 {
     match (table, places[row], places[column]) {
+        _ if row == column => 1.0,
         (Some(table), Some(row), Some(column)) => {
             row.sign * column.sign * table.cells[row.row * table.names.len() + column.row]
         }
-        _ => 0.0,
+        _ => model.correlation.at(row, column),
     }
 }
 

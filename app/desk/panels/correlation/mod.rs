@@ -1,30 +1,42 @@
-//! The Correlation view: the matrix as a heat map with numbers, its chosen cell to be edited, and whether the whole is
-//! possible. The matrix stays symmetric; what an edit does is the session's business.
+//! The Correlation view: the matrix as a heat map with numbers, its chosen cell to be edited, whether the whole is possible
+//! and how it could be made so, and how it is estimated. What an edit does is the session's business.
 
 /// The chosen cell: its value, and what it may be.
 pub mod cell;
+/// How fitted correlations are estimated.
+pub mod estimator;
 /// The map, with pointer and keys.
 pub mod map;
-/// The matrix as the document has it, in the model's order.
+/// The matrix as the document has it.
 pub mod matrix;
+/// The nearest valid matrix.
+pub mod repair;
+/// What the chosen pair did in the history.
+pub mod scatter;
 
-use crate::desk::commands::Queue;
+use crate::desk::commands::{Command, Queue};
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
+use crate::workspace::MatrixOrder;
+use ebbmark_engine::figures::grouped;
 use egui::{Align, Layout, Ui};
 use matrix::Matrix;
 
 /// Draws the view.
 pub fn correlation_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let Some(matrix) = Matrix::of(session).filter(|matrix| matrix.size() > 1) else {
+    let Some(matrix) = Matrix::of(ui, session).filter(|matrix| matrix.size() > 1) else {
         ui.centered_and_justified(|ui| {
             ui.label(theme::soft(ui, "Fewer than two risk factors: nothing to correlate"))
         });
         return;
     };
     let chosen = chosen_cell(session, &matrix);
-    title_ui(ui, &matrix);
+    title_ui(ui, session, &matrix);
+    order_ui(ui, session, queue);
+    repair::repair_ui(ui, session, queue);
+    estimator::estimator_ui(ui, session, queue);
     cell::cell_ui(ui, queue, &matrix, chosen);
+    scatter::scatter_ui(ui, session, [matrix.names[chosen.0], matrix.names[chosen.1]]);
     ui.add_space(4.0);
     map::map_ui(ui, queue, &matrix, chosen);
 }
@@ -36,15 +48,36 @@ fn chosen_cell(session: &Session, matrix: &Matrix<'_>) -> (usize, usize) {
     chosen.unwrap_or((1, 0))
 }
 
-fn title_ui(ui: &mut Ui, matrix: &Matrix<'_>) {
+fn title_ui(ui: &mut Ui, session: &Session, matrix: &Matrix<'_>) {
     ui.horizontal(|ui| {
         ui.label(theme::strong("Correlation of the factors' shocks"));
+        let model = session.live().model.as_deref();
+        if let Some(history) = model.and_then(|model| model.history.as_ref()?.estimator.as_ref()) {
+            ui.label(theme::soft(ui, "fitted where not typed")).on_hover_text(history);
+        }
         ui.with_layout(Layout::right_to_left(Align::Center), |ui| {
-            let smallest = matrix.smallest_eigenvalue(ui);
-            let words = format!("smallest eigenvalue {}", matrix::eigenvalue_words(smallest));
+            let (smallest, largest) = matrix.eigenvalue_ends(ui);
             let is_possible = smallest >= matrix::LEAST_EIGENVALUE;
+            let condition = if smallest > 0.0 { grouped(largest / smallest, 0) } else { "none".to_owned() };
+            let words =
+                format!("smallest eigenvalue {}, condition {condition}", matrix::eigenvalue_words(smallest));
             let text = theme::soft(ui, words);
-            ui.label(if is_possible { text } else { text.color(Palette::of(ui).loss) });
+            ui.label(if is_possible { text } else { text.color(Palette::of(ui).loss) }).on_hover_text(
+                "Below zero the correlations can't hold together; a large condition number means that some mix of factors \
+                 hardly moves",
+            );
         });
+    });
+}
+
+fn order_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
+    ui.horizontal(|ui| {
+        ui.label(theme::soft(ui, "Order"));
+        for order in [MatrixOrder::Book, MatrixOrder::Group, MatrixOrder::Closeness] {
+            let command = Command::OrderMatrix(order);
+            if ui.selectable_label(session.view().matrix_order == order, command.text()).clicked() {
+                queue.push(command);
+            }
+        }
     });
 }

@@ -3,7 +3,8 @@
 use super::{factors, holdings};
 use ebbmark_engine::factors::{CorrelationTable, Inputs, Model};
 
-/// Sets the correlation of two different factors, -1 to 1; factors the table did not have join it uncorrelated.
+/// Sets the correlation of two different factors, -1 to 1; factors the table did not have join it as the model has them,
+/// so that nothing else moves.
 pub fn set(inputs: &mut Inputs, model: Option<&Model>, pair: [&String; 2], value: f64) -> Option<()> {
     if pair[0] == pair[1] || !(-1.0..=1.0).contains(&value) {
         return None;
@@ -14,7 +15,7 @@ pub fn set(inputs: &mut Inputs, model: Option<&Model>, pair: [&String; 2], value
         cells: Vec::new(),
         lines: Vec::new(),
     });
-    let [row, column] = pair.map(|name| place(table, name));
+    let [row, column] = pair.map(|name| place(table, model, name));
     let size = table.names.len();
     table.cells[row * size + column] = value;
     table.cells[column * size + row] = value;
@@ -22,7 +23,7 @@ pub fn set(inputs: &mut Inputs, model: Option<&Model>, pair: [&String; 2], value
 }
 
 /// Row of a factor, added where it has none.
-fn place(table: &mut CorrelationTable, name: &str) -> usize {
+fn place(table: &mut CorrelationTable, model: Option<&Model>, name: &str) -> usize {
     if let Some(row) = table.names.iter().position(|known| known == name) {
         return row;
     }
@@ -30,7 +31,8 @@ fn place(table: &mut CorrelationTable, name: &str) -> usize {
     let size = old + 1;
     let cell = |row: usize, column: usize| match (row < old, column < old) {
         (true, true) => table.cells[row * old + column],
-        _ => f64::from(u8::from(row == column)),
+        _ if row == column => 1.0,
+        _ => in_model(model, name, &table.names[row.min(column)]),
     };
     let cells = (0..size * size).map(|at| cell(at / size, at % size)).collect();
     table.cells = cells;
@@ -38,6 +40,13 @@ fn place(table: &mut CorrelationTable, name: &str) -> usize {
     // A table with a row that no file has is no file's any more.
     table.lines.clear();
     old
+}
+
+/// Correlation of two factors in the last valid model; 0 where it lacks one of them.
+fn in_model(model: Option<&Model>, one: &str, other: &str) -> f64 {
+    let place = |model: &Model, name: &str| model.factors.iter().position(|factor| factor.name == name);
+    let known = model.and_then(|model| Some(model.correlation.at(place(model, one)?, place(model, other)?)));
+    known.unwrap_or(0.0)
 }
 
 /// Takes factors out of the table that nothing else names any more.

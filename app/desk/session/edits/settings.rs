@@ -13,6 +13,7 @@ pub fn change(settings: &mut Settings, change: &SettingChange) -> Option<()> {
                 currency.as_deref().map(str::trim).filter(|code| !code.is_empty()).map(str::to_uppercase);
         }
         SettingChange::DaysPerYear(days) => settings.days_per_year = positive(*days)?,
+        SettingChange::RepairsCorrelation(is_repaired) => settings.repairs_correlation = *is_repaired,
         SettingChange::AsOf(date) => settings.as_of = *date,
         SettingChange::Capital(money) => settings.capital = optional(*money)?,
         SettingChange::LossLimit(money) => settings.loss_limit = optional(*money)?,
