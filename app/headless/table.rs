@@ -4,7 +4,7 @@
 use super::answer::Answer;
 use super::columns::align;
 use super::writer::Writer;
-use ebbmark_engine::figures::{CAUTION, grouped, percent};
+use ebbmark_engine::figures::{CAUTION, grouped, percent, source_words};
 use ebbmark_engine::measures::LossFrom;
 use ebbmark_engine::measures::reading::{DrawdownRow, LossRow, MomentRow};
 
@@ -21,6 +21,8 @@ pub(super) fn write(answer: &Answer, loss_from: LossFrom) -> String {
     let sections = [
         head(answer),
         align(&loss_rows(answer, loss_from, &writer)),
+        align(&range_rows(answer, &writer)),
+        range_sources(answer),
         align(&fall_rows(answer, &writer)),
         align(&limit_rows(answer, &writer)),
         align(&moment_rows(answer, &writer)),
@@ -59,6 +61,30 @@ fn loss_rows(answer: &Answer, loss_from: LossFrom, writer: &Writer) -> Rows {
         }
     }
     rows
+}
+
+/// The second range: over the fit's parameters.
+fn range_rows(answer: &Answer, writer: &Writer) -> Rows {
+    let Some(range) = &answer.parameter_range else { return Vec::new() };
+    let writer = writer.within(range.loss.iter().map(|row| (row.var_high - row.var_low) / 40.0));
+    let mut rows = vec![vec![writer.titled("Range over the fit's parameters"), "95 % range".to_owned()]];
+    for row in &range.loss {
+        for (measure, low, high) in [("VaR", row.var_low, row.var_high), ("ES", row.es_low, row.es_high)] {
+            let label = format!("  {} {measure}", level(row.confidence));
+            rows.push(vec![label, writer.range(Some(low), Some(high))]);
+        }
+    }
+    rows
+}
+
+fn range_sources(answer: &Answer) -> String {
+    let Some(range) = &answer.parameter_range else { return String::new() };
+    format!(
+        "Most of it from {}; {} simulated histories fitted again, {} refits refused\n",
+        source_words(range, 3),
+        range.draws,
+        range.refused
+    )
 }
 
 /// About one standard error of a figure with a 95 % range; 0 where an end is open.

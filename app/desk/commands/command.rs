@@ -118,6 +118,10 @@ pub enum Command {
     StopRun,
     /// Starts the run again.
     RunAgain,
+    /// Ranges the losses at the line over the fit's parameters.
+    RangeParameters,
+    /// Stops that.
+    StopRange,
     /// Puts a notice away, by its number.
     DismissNotice(u64),
     /// Puts away the list of what was wrong with files that were not opened.

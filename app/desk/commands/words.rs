@@ -57,6 +57,8 @@ impl Command {
             Self::ToggleTheme => "Light or dark",
             Self::StopRun => "Stop",
             Self::RunAgain => "Run again",
+            Self::RangeParameters => "Range over the parameters",
+            Self::StopRange => "Stop ranging",
             _ => "",
         }
     }
@@ -88,6 +90,10 @@ impl Command {
             Self::ToggleTheme | Self::WearTheme(_) => "Change between light and dark",
             Self::StopRun => "Stop the run; the figures so far stay",
             Self::RunAgain => "Draw all paths again",
+            Self::RangeParameters => {
+                "How far VaR and ES move over the fit's 95 % parameter range: 200 histories like the one at hand, fitted again"
+            }
+            Self::StopRange => "Stop ranging over the parameters",
             _ => "",
         }
     }

@@ -15,6 +15,7 @@ impl Session {
     pub fn take(&mut self, answer: Answer) -> Vec<Request> {
         match answer {
             Answer::Figures { generation, figures } => return self.take_figures(generation, figures),
+            Answer::Ranging { number, ranging } => self.take_ranging(number, ranging),
             Answer::Opened(opened) => return self.take_opened(*opened),
             Answer::Refused(refusal) => self.refusal = Some(refusal),
             Answer::Picked { purpose, paths } => return self.take_picked(purpose, paths),

@@ -17,6 +17,8 @@ impl Session {
             Command::Undo => self.step(Step::Back),
             Command::Redo => self.step(Step::Forth),
             Command::StopRun => vec![Request::Stop],
+            Command::RangeParameters => self.range(),
+            Command::StopRange => self.drop_range(),
             Command::RunAgain => vec![self.run()],
             Command::AskPath(purpose) => vec![self.ask_path(purpose)],
             Command::TypePath(purpose) => self.show_path_field(Some(purpose)),
@@ -90,6 +92,11 @@ impl Session {
             // Another book's figures would not be from before an edit, but simply wrong.
             self.live = Live::default();
             requests.push(Request::Stop);
+        }
+        let is_read_anew =
+            needs_run(&old, &self.document) || needs_reading(&old.settings, &self.document.settings);
+        if is_read_anew {
+            requests.extend(self.drop_range());
         }
         if needs_run(&old, &self.document) {
             requests.push(self.run());

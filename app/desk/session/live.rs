@@ -1,6 +1,7 @@
 //! Figures of the current inputs, as far as they have arrived: closed form first, then from more and more paths.
 //! Filled by the worker's answers; panels only read.
 
+use crate::desk::worker::Ranging;
 use ebbmark_engine::factors::Model;
 use ebbmark_engine::fit::Fit;
 use ebbmark_engine::measures::{Bands, Conventions, Density, Reading};
@@ -54,6 +55,8 @@ pub struct Live {
     pub bands: Option<Arc<Bands>>,
     /// Everything at the reading line.
     pub at_line: Option<Arc<AtLine>>,
+    /// The losses at the line over the fit's parameters, where that was asked for.
+    pub ranging: Option<Ranging>,
     /// Where the run stands.
     pub state: RunState,
     /// Paths done so far.

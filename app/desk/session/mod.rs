@@ -9,6 +9,8 @@ mod apply;
 pub mod edits;
 /// Figures of the current inputs, as far as they have arrived.
 pub mod live;
+/// Losses over the fit's parameters.
+mod ranging;
 /// Edits that can be taken back.
 pub mod undo;
 
@@ -38,6 +40,7 @@ pub struct Session {
     path_field: Option<PathPurpose>,
     waiting_exports: Vec<(ExportKind, PathBuf)>,
     asked_generation: u64,
+    asked_range: u64,
 }
 
 impl Session {
@@ -59,6 +62,7 @@ impl Session {
             path_field: None,
             waiting_exports: Vec::new(),
             asked_generation: 0,
+            asked_range: 0,
         }
     }
 

@@ -21,15 +21,19 @@ pub mod open;
 mod post;
 /// Paths into readings and bands.
 mod read;
+/// Losses over the fit's parameters.
+pub mod range;
 /// Running.
 mod run;
 
 use crate::workspace::{Kept, Slot};
 use board::Board;
 use post::Post;
+pub use range::{RangeTask, Ranging};
 pub use request::{Answer, ExportRequest, Figures, LineRequest, Opened, Request};
 use std::panic::{self, AssertUnwindSafe};
 use std::sync::Arc;
+use std::sync::atomic::{AtomicU64, Ordering};
 use std::sync::mpsc::{Receiver, Sender, channel};
 use std::thread::{self, JoinHandle};
 use std::time::Duration;
@@ -39,6 +43,8 @@ pub struct Worker {
     board: Arc<Board>,
     files: Sender<files::Task>,
     dialogs: Sender<dialog::Asked>,
+    ranges: Sender<RangeTask>,
+    newest_range: Arc<AtomicU64>,
     keeper: Option<Keeper>,
     answers: Receiver<Answer>,
 }
@@ -72,12 +78,16 @@ impl Worker {
         begin(&post, move |post| files::serve(&asked, post));
         let (dialogs, asked) = channel();
         begin(&post, move |post| dialog::serve(&asked, shown, post));
+        let newest_range = Arc::new(AtomicU64::new(0));
+        let (ranges, asked) = channel();
+        let newest = Arc::clone(&newest_range);
+        begin(&post, move |post| range::serve(&asked, &newest, post));
         let keeper = slot.map(|slot| {
             let (sender, asked) = channel();
             let thread = begin(&post, move |post| keep::serve(&slot, &asked, post));
             Keeper { asked: sender, thread }
         });
-        Self { board, files, dialogs, keeper, answers }
+        Self { board, files, dialogs, ranges, newest_range, keeper, answers }
     }
 
     /// Asks for something. A thread that has ended answers nothing more, and there is nobody left to tell.
@@ -93,6 +103,11 @@ impl Worker {
             }),
             Request::Read(line) => self.board.change(|state| state.line = Some(line)),
             Request::Stop => self.board.stop(),
+            Request::Range(task) => {
+                self.newest_range.store(task.number, Ordering::Release);
+                let _ = self.ranges.send(*task);
+            }
+            Request::StopRange => self.newest_range.store(0, Ordering::Release),
             Request::PickPath { purpose, file_name } => {
                 let _ = self.dialogs.send(dialog::Asked { purpose, file_name });
             }
@@ -138,6 +153,7 @@ impl Drop for Worker {
     /// Ends the run and sees the session kept. Other threads end by themselves, a dialog when it is closed.
     fn drop(&mut self) {
         self.board.close();
+        self.newest_range.store(0, Ordering::Release);
         if let Some(Keeper { asked, thread }) = self.keeper.take() {
             drop(asked);
             // A keeper with a fault has told so already.

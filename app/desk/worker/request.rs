@@ -1,5 +1,6 @@
 //! What the session asks of the worker, and what comes back. Plain data.
 
+use super::range::{RangeTask, Ranging};
 use crate::desk::commands::{ExportKind, PathPurpose};
 use crate::desk::notices::Refusal;
 use crate::desk::session::AtLine;
@@ -25,6 +26,10 @@ pub enum Request {
     Read(LineRequest),
     /// Stops the run; what has arrived stays.
     Stop,
+    /// Ranges the losses at the line over the fit's parameters; an older wish is stopped.
+    Range(Box<RangeTask>),
+    /// Stops ranging.
+    StopRange,
     /// Shows a file dialog.
     PickPath {
         /// What for.
@@ -89,6 +94,13 @@ pub enum Answer {
         generation: u64,
         /// What of it.
         figures: Figures,
+    },
+    /// How far the range over the parameters is.
+    Ranging {
+        /// Number of the wish.
+        number: u64,
+        /// How far.
+        ranging: Ranging,
     },
     /// A document was opened.
     Opened(Box<Opened>),

@@ -59,7 +59,8 @@ impl Repair {
         changes.sort_by(|one, other| other.size().total_cmp(&one.size()));
         changes.truncate(MOST_TOLD);
         changes.retain(|change| change.size() > 0.0);
-        let correlation = Correlation::new(n, nearest.cells).map_err(|_| NearestError::Held)?;
+        // Lifted above rounding, so that the matrix is valid; held cells may keep it from that.
+        let Ok(correlation) = Correlation::new(n, nearest.cells) else { return Err(NearestError::Held) };
         Ok(Self { correlation, distance: nearest.distance, smallest_eigenvalue_before, changes })
     }
 

@@ -18,11 +18,14 @@ pub mod fall;
 pub mod loss;
 /// Whole figures for the page.
 pub mod page;
+/// Where a parameter range comes from.
+pub mod sources;
 
 pub use amounts::{Scale, grouped, percent};
 pub use figure::{Anchor, Axis, Figure, Mark, Panel, Place, Role, Span, Tick};
 pub use money::{Money, confidence_words, half_range, row_at, signed};
 pub use page::{CAUTION, distribution_figure, horizon_figure};
+pub use sources::source_words;
 pub use subject::Subject;
 
 /// Ticks that a panel has room for.

@@ -1,6 +1,8 @@
 //! The reading: every figure at the reading line with its range, and the settings that decide it where they are read.
 //! The words of figures are made in `readout`; the sections that are forms live in `settings`.
 
+/// The second range of the losses.
+pub mod range;
 /// The settings among the figures.
 pub mod settings;
 
@@ -23,6 +25,7 @@ pub fn reading_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     if let Some((money, at_line)) = money_of(session).zip(session.live().at_line.as_deref()) {
         loss_ui(ui, session, queue, &money, at_line);
         settings::confidences_ui(ui, session, queue);
+        range::range_ui(ui, session, queue, &money, at_line);
         section_ui(ui, "Largest fall from a peak");
         drawdown_ui(ui, session, &money, at_line);
         section_ui(ui, "Limit and capital");
