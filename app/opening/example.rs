@@ -11,7 +11,7 @@ const NAME: &str = "Ellerwick";
 const CURRENCY: &str = "EUR";
 const AS_OF: Date = date(2026, 11, 30);
 
-const FILES: [(FileKind, &str, &str); 5] = [
+const FILES: [(FileKind, &str, &str); 6] = [
     (FileKind::Positions, "Ellerwick.csv", include_str!("../../example-portfolios/mixed-fund/Ellerwick.csv")),
     (FileKind::Exposures, "exposures.csv", include_str!("../../example-portfolios/mixed-fund/exposures.csv")),
     (FileKind::Factors, "factors.csv", include_str!("../../example-portfolios/mixed-fund/factors.csv")),
@@ -20,6 +20,7 @@ const FILES: [(FileKind, &str, &str); 5] = [
         "correlation.csv",
         include_str!("../../example-portfolios/mixed-fund/correlation.csv"),
     ),
+    (FileKind::History, "history.csv", include_str!("../../example-portfolios/mixed-fund/history.csv")),
     (FileKind::Holidays, "holidays.csv", include_str!("../../example-portfolios/mixed-fund/holidays.csv")),
 ];
 
@@ -30,8 +31,10 @@ const FILES: [(FileKind, &str, &str); 5] = [
 pub fn built_in_example() -> Result<Opened, Faults> {
     let mut parts = Parts::default();
     for (kind, label, text) in FILES {
-        let source = Source { path: path_of(label), stem: NAME.to_owned(), hash: hash_of(text.as_bytes()) };
-        parts.take(kind, &source, &Table::read(text, label)?)?;
+        let path = path_of(label);
+        let table = Table::read(text, &path.display().to_string())?;
+        let source = Source { path, stem: NAME.to_owned(), hash: hash_of(text.as_bytes()) };
+        parts.take(kind, &source, &table)?;
     }
     let opened = parts.into_book()?;
     Ok(Opened { book_currency: Some(CURRENCY.to_owned()), as_of: Some(AS_OF), ..opened })

@@ -2,7 +2,8 @@
 //! run, the same from a file with decimal commas, and gains told as gains.
 
 use super::support::{ONE_SHARE, call, read_json, without_seconds, write};
-use ebbmark_engine::factors::{Inputs, Model, ModelSettings};
+use ebbmark::opening::built_in_example;
+use ebbmark::workspace::{Document, Settings};
 use ebbmark_engine::measures::{self, Conventions, LossFrom};
 use ebbmark_engine::simulate::{self, Plan, Unwatched};
 use serde_json::Value;
@@ -24,10 +25,8 @@ fn always_another_seed_is_another_sample() {
 /// What `read --horizon 21` prints are the digits of a run to 63 days read at day 21.
 #[test]
 fn agree_horizon_and_longer_run_read_at_that_day() {
-    let inputs: Inputs = ebbmark::opening::built_in_example().unwrap().inputs;
-    let settings =
-        ModelSettings { book_currency: Some("EUR".into()), days_per_year: 252.0, repairs_correlation: false };
-    let model = Model::assemble(&inputs, &settings).unwrap();
+    let (document, _) = Document::of_book(built_in_example().unwrap(), &Settings::usual());
+    let model = document.assemble().unwrap().model;
     let loss_limit = Some(4e6);
     let plan = Plan { paths: 2000, seed: 1, kept_days: (1..=63).collect(), loss_limit, threads: None };
     let sample = simulate::run(&model, &plan, &Unwatched).unwrap().sample(21).unwrap();
