@@ -41,6 +41,9 @@ impl PartialEq for Asked {
     }
 }
 
+/// The fit of a history, and what the book takes of it.
+type FitAndTaken = (Option<Arc<Fit>>, Option<Arc<Fitted>>);
+
 impl Document {
     /// Its model.
     ///
@@ -71,7 +74,7 @@ impl Assembler {
         self.assemble(&repaired).ok()?.model.repair
     }
 
-    fn fitted(&mut self, document: &Document) -> Result<(Option<Arc<Fit>>, Option<Arc<Fitted>>), Faults> {
+    fn fitted(&mut self, document: &Document) -> Result<FitAndTaken, Faults> {
         let Some(book_history) = &document.history else { return Ok((None, None)) };
         let Some(history) = book_history.history() else { return Ok((None, book_history.fitted.clone())) };
         let settings = document.settings.model_settings();

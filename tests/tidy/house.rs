@@ -17,7 +17,7 @@ fn order_of_rooms() -> Vec<String> {
 #[test]
 fn tidy_sources_are_found() {
     assert!(sources(&["app"]).len() > 40, "the rules below would hold of nothing");
-    let rooms = ["maths", "tables", "history", "book", "factors", "simulate", "measures", "figures"];
+    let rooms = ["maths", "tables", "history", "book", "factors", "fit", "simulate", "measures", "figures"];
     assert_eq!(order_of_rooms(), rooms);
 }
 

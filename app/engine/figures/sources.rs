@@ -1,4 +1,4 @@
-//! Where a parameter range comes from, in words.
+//! Where a parameter range comes from, in words. What it is, the measures say.
 
 use super::percent;
 use crate::measures::ParameterRange;
