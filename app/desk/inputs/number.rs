@@ -32,6 +32,8 @@ pub struct NumberField<'a> {
     pub pull: f64,
     /// Decimals that always stand, zeros too.
     pub decimals: usize,
+    /// Digits shown of a number that was computed; none to show all that were typed.
+    pub digits: Option<usize>,
     /// Whether it stands as plain text until it is pointed at.
     pub is_quiet: bool,
 }
@@ -46,6 +48,7 @@ impl<'a> NumberField<'a> {
             range: f64::MIN..=f64::MAX,
             pull: 0.005,
             decimals: 0,
+            digits: None,
             is_quiet: false,
         }
     }
@@ -70,6 +73,11 @@ impl<'a> NumberField<'a> {
         Self { decimals, ..self }
     }
 
+    /// With no more digits than that, for a number that was computed rather than typed.
+    pub fn digits(self, digits: usize) -> Self {
+        Self { digits: Some(digits), ..self }
+    }
+
     /// Plain text until it is pointed at, for tables.
     pub fn quiet(self) -> Self {
         Self { is_quiet: true, ..self }
@@ -92,7 +100,7 @@ impl<'a> NumberField<'a> {
             .clamp_existing_to_range(false)
             .update_while_editing(false)
             .max_decimals(if self.shown == Shown::Whole { 0 } else { 6 })
-            .custom_formatter(|number, _| padded_figure(number, self.decimals))
+            .custom_formatter(|number, _| self.words(number))
             .custom_parser(read_figure)
             .suffix(suffix);
         let response = ui.scope(|ui| {
@@ -103,10 +111,18 @@ impl<'a> NumberField<'a> {
         });
         let response = response.inner.accessible_name(self.name);
         // The text of an edited field is rounded for reading: leaving it unchanged must not round the number.
-        let is_changed =
-            response.changed() && after.is_finite() && shown_figure(after) != shown_figure(before);
+        let is_changed = response.changed() && after.is_finite() && self.words(after) != self.words(before);
         let edit = is_changed.then_some(after / scale);
         (response, edit)
+    }
+
+    /// The number as it stands on screen.
+    fn words(&self, number: f64) -> String {
+        let Some(digits) = self.digits.filter(|_| number != 0.0) else {
+            return padded_figure(number, self.decimals);
+        };
+        let before_point = number.abs().log10().floor() as i32 + 1;
+        grouped(number, (digits as i32 - before_point).clamp(0, 6) as usize)
     }
 
     /// Points dragged move a large number by more than a small one.

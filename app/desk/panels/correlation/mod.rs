@@ -24,19 +24,26 @@ use matrix::Matrix;
 
 /// Draws the view.
 pub fn correlation_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
-    let Some(matrix) = Matrix::of(ui, session).filter(|matrix| matrix.size() > 1) else {
-        ui.centered_and_justified(|ui| {
-            ui.label(theme::soft(ui, "Fewer than two risk factors: nothing to correlate"))
-        });
+    let matrix = Matrix::of(ui, session);
+    let words = match &matrix {
+        None => "The factors stand here once the book can be read",
+        Some(_) => "Fewer than two risk factors: nothing to correlate",
+    };
+    let Some(matrix) = matrix.filter(|matrix| matrix.size() > 1) else {
+        ui.centered_and_justified(|ui| ui.label(theme::soft(ui, words)));
         return;
     };
     let chosen = chosen_cell(session, &matrix);
     title_ui(ui, session, &matrix);
-    order_ui(ui, session, queue);
     repair::repair_ui(ui, session, queue);
-    estimator::estimator_ui(ui, session, queue);
-    cell::cell_ui(ui, queue, &matrix, chosen);
-    scatter::scatter_ui(ui, session, [matrix.names[chosen.0], matrix.names[chosen.1]]);
+    ui.horizontal_top(|ui| {
+        scatter::scatter_ui(ui, session, [matrix.names[chosen.0], matrix.names[chosen.1]]);
+        ui.vertical(|ui| {
+            order_ui(ui, session, queue);
+            estimator::estimator_ui(ui, session, queue);
+            cell::cell_ui(ui, queue, &matrix, chosen);
+        });
+    });
     ui.add_space(4.0);
     map::map_ui(ui, queue, &matrix, chosen);
 }

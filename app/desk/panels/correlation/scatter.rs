@@ -3,11 +3,11 @@
 use crate::desk::session::Session;
 use crate::desk::theme::{self, Palette};
 use ebbmark_engine::maths::TWO_SIDED_95;
-use egui::{Id, Rect, Sense, Stroke, Ui, pos2, vec2};
+use egui::{Align2, FontId, Id, Rect, Role, Sense, Stroke, Ui, WidgetInfo, pos2, vec2};
 use std::sync::Arc;
 
 /// Side of the picture, in points.
-const SIDE_POINTS: f32 = 104.0;
+const SIDE_POINTS: f32 = 92.0;
 /// Standard deviations from the middle to its edge.
 const REACH: f64 = 4.0;
 
@@ -19,32 +19,29 @@ struct Shocks {
     points: Arc<Vec<[f64; 2]>>,
 }
 
-/// Draws dots and words; nothing without a history that has both.
+/// Draws the dots, what they say when pointed at; nothing without a history that has both.
 pub fn scatter_ui(ui: &mut Ui, session: &Session, pair: [&String; 2]) {
     if pair[0] == pair[1] {
         return;
     }
     let Some(points) = shocks(ui, session, pair).filter(|points| points.len() > 3) else { return };
-    ui.horizontal(|ui| {
-        let (rect, response) = ui.allocate_exact_size(vec2(SIDE_POINTS, SIDE_POINTS), Sense::hover());
-        dots_ui(ui, rect, &points);
-        response.on_hover_text(format!(
-            "Each dot a date: the shock of {} across, of {} upwards, in standard deviations",
-            pair[0], pair[1]
+    let (rect, response) = ui.allocate_exact_size(vec2(SIDE_POINTS, SIDE_POINTS), Sense::hover());
+    dots_ui(ui, rect, &points);
+    let (correlation, low, high) = interval(&points);
+    let words = format!("{correlation:.2} ({low:.2} to {high:.2})");
+    let font = FontId::proportional(theme::SMALL_POINTS);
+    let at = rect.left_bottom() + vec2(4.0, -2.0);
+    ui.painter().text(at, Align2::LEFT_BOTTOM, words, font, Palette::of(ui).ink);
+    response.widget_info(|| WidgetInfo::labeled(Role::Image, true, "Shocks of the chosen pair"));
+    response.on_hover_ui(|ui| {
+        ui.label(format!(
+            "Each dot one of {} dates that both have: the shock of {} across, of {} upwards, in standard deviations up to \
+             {REACH}",
+            points.len(),
+            pair[0],
+            pair[1]
         ));
-        ui.vertical(|ui| {
-            let (correlation, low, high) = interval(&points);
-            ui.label(format!("On {} dates that both have: {correlation:.2}", points.len()));
-            ui.label(theme::soft(
-                ui,
-                format!("95 % range {low:.2} to {high:.2} (Fisher), every date counting the same"),
-            ));
-            let far = points.iter().filter(|point| point.iter().any(|value| value.abs() > REACH)).count();
-            if far > 0 {
-                let words = format!("{far} beyond {REACH} standard deviations, drawn on the edge");
-                ui.label(theme::soft(ui, words));
-            }
-        });
+        ui.label("Below: their correlation, every date counting the same, with its 95 % range by Fisher's transform");
     });
 }
 

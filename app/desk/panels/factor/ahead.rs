@@ -1,4 +1,5 @@
-//! Where the chosen factor is headed by itself: its exact mean and its 50 and 90 % bands, as a small chart.
+//! Where the chosen factor is headed by itself, its exact mean and its 50 and 90 % bands, and where it came from, as a
+//! small chart.
 
 use crate::desk::plot::{Span, Tick, settled, ticks};
 use crate::desk::session::Session;
@@ -31,15 +32,18 @@ pub fn ahead_ui(ui: &mut Ui, session: &Session, model: &Model, factor: &RiskFact
     ui.label(theme::soft(ui, "By itself: mean, half and 90 % of outcomes on each day"));
     let horizon = session.document().settings.horizon_days;
     let ahead = worked_out(ui, factor, model.days_per_year, horizon);
-    let (low, high) = range(&ahead, factor);
+    let behind = behind(session, factor, horizon);
+    let (low, high) = range(&ahead, factor, &behind);
     let key = ui.scope_id().with(("factor range", &factor.name));
     let chart = Chart {
         palette: Palette::of(ui),
-        across: Span::new(0.0, f64::from(horizon)),
+        across: Span::new(behind.first().map_or(0.0, |[day, _]| *day), f64::from(horizon)),
+        ahead_days: Span::new(0.0, f64::from(horizon)),
         up: settled(ui, key, low, high),
         today: today(factor),
         long_run: long_run(factor),
         ahead: &ahead,
+        behind,
     };
     let response = chart.ui(ui);
     response.on_hover_text("Exact mean, and the quantiles 5, 25, 75 and 95 %, of the factor alone");
@@ -78,9 +82,27 @@ fn long_run(factor: &RiskFactor) -> Option<f64> {
     }
 }
 
-fn range(ahead: &FactorAhead, factor: &RiskFactor) -> (f64, f64) {
+/// The last rows of a daily history, days counted back from today; half as many as are shown ahead.
+fn behind(session: &Session, factor: &RiskFactor, horizon: u32) -> Vec<[f64; 2]> {
+    let is_daily = session.live().fit.as_ref().is_some_and(|fit| fit.spacing.row_days() == Some(1));
+    let history = session.document().history.as_ref().and_then(|history| history.history());
+    let Some((history, series)) = history.and_then(|history| Some((history, history.series(&factor.name)?)))
+    else {
+        return Vec::new();
+    };
+    let rows = history.dates.len();
+    let first = rows.saturating_sub(horizon as usize / 2);
+    let points = series.quoted().filter(|(row, _)| *row >= first && is_daily);
+    points.map(|(row, level)| [row as f64 + 1.0 - rows as f64, level]).collect()
+}
+
+fn range(ahead: &FactorAhead, factor: &RiskFactor, behind: &[[f64; 2]]) -> (f64, f64) {
     let ends = ahead.ninety.iter().copied().flatten();
-    let shown = ends.chain([today(factor)]).chain(long_run(factor)).filter(|value| value.is_finite());
+    let shown = ends
+        .chain(behind.iter().map(|[_, level]| *level))
+        .chain([today(factor)])
+        .chain(long_run(factor))
+        .filter(|value| value.is_finite());
     shown.fold((f64::INFINITY, f64::NEG_INFINITY), |(low, high): (f64, f64), value| {
         (low.min(value), high.max(value))
     })
@@ -90,17 +112,23 @@ fn range(ahead: &FactorAhead, factor: &RiskFactor) -> (f64, f64) {
 struct Chart<'a> {
     palette: &'a Palette,
     across: Span,
+    /// From today on.
+    ahead_days: Span,
     up: Span,
     today: f64,
     long_run: Option<f64>,
     ahead: &'a FactorAhead,
+    /// `[day, level]` of the history, days negative.
+    behind: Vec<[f64; 2]>,
 }
 
 impl Chart<'_> {
     fn ui(&self, ui: &mut Ui) -> Response {
         // The words under the last day reach half their width beyond the chart.
         let size = ui.available_size() - vec2(RIGHT_POINTS, 0.0);
-        let day_ticks = ticks::days(self.across, ((size.x - LEFT_POINTS) / DAY_TICK_POINTS) as usize);
+        let share = self.ahead_days.to / (self.across.to - self.across.from);
+        let room = f64::from((size.x - LEFT_POINTS) / DAY_TICK_POINTS) * share;
+        let day_ticks = ticks::days(self.ahead_days, room as usize);
         let level_step = ticks::step(self.up, (size.y / LEVEL_TICK_POINTS) as usize);
         let decimals = ticks::decimals(level_step);
         let level_ticks = ticks::along(self.up, level_step, 0.0, |level| grouped(level, decimals));
@@ -140,6 +168,7 @@ impl Chart<'_> {
             let fill = self.palette.neutral.gamma_multiply(weight);
             plot.add(FilledArea::new(name, &days, &low, &high).fill_color(fill));
         }
+        plot.line(Line::new("history", self.behind.clone()).color(self.palette.ink).width(1.0));
         let mean = from_today(&mut self.ahead.mean.iter().copied());
         let mean: Vec<[f64; 2]> = days.iter().zip(mean).map(|(day, level)| [*day, level]).collect();
         plot.line(Line::new("mean", mean).color(self.palette.neutral).width(1.8));

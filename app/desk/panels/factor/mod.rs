@@ -9,11 +9,14 @@ use crate::desk::inputs::{NumberField, Shown, field_row_ui};
 use crate::desk::session::Session;
 use crate::desk::theme;
 use ebbmark_engine::book::{DiffusionKind, HalfLife, LevelUnit};
-use ebbmark_engine::factors::{Diffusion, Model, RiskFactor};
-use egui::{ComboBox, Ui};
+use ebbmark_engine::factors::{Diffusion, Model, Origin, RiskFactor};
+use ebbmark_engine::figures::grouped;
+use egui::{ComboBox, Label, Ui};
 
 /// Half-life offered to a factor whose reversion is switched on again, trading days.
 const OFFERED_HALF_LIFE_DAYS: f64 = 63.0;
+/// Digits shown of a fitted parameter: more than its error leaves.
+const FITTED_DIGITS: usize = 4;
 /// Largest volatility of a log model that can be dragged to, a fraction per year.
 const MOST_LOG_VOLATILITY: f64 = 5.0;
 
@@ -32,6 +35,7 @@ pub fn factor_ui(ui: &mut Ui, session: &Session, queue: &mut Queue) {
     heading_ui(ui, queue, model, factor);
     diffusion_ui(ui, queue, factor);
     parameters_ui(ui, queue, factor);
+    origin_ui(ui, session, factor);
     ui.add_space(4.0);
     ahead::ahead_ui(ui, session, model, factor);
 }
@@ -107,24 +111,66 @@ fn parameters_ui(ui: &mut Ui, queue: &mut Queue, factor: &RiskFactor) {
     }
 }
 
+/// Which history the fitted parameters are from.
+fn origin_ui(ui: &mut Ui, session: &Session, factor: &RiskFactor) {
+    let fit = session.live().fit.as_ref().and_then(|fit| fit.factor(&factor.name));
+    let Some((from, to)) = fit.and_then(|fit| fit.dates).filter(|_| factor.origins.has_fitted()) else {
+        return;
+    };
+    let changes = fit.map_or(0, |fit| fit.observations);
+    let words = format!("Fitted on {from} to {to}, {} changes", grouped(changes as f64, 0));
+    let response = ui.add(Label::new(theme::soft(ui, words)).truncate());
+    response
+        .on_hover_text("What is typed stands above what is fitted; the Fit view shows all three diffusions");
+}
+
+/// Where a parameter came from.
+fn origin_of(factor: &RiskFactor, parameter: Parameter) -> Origin {
+    let origins = &factor.origins;
+    match parameter {
+        Parameter::Level(_) => origins.level,
+        Parameter::Drift(_) => origins.drift,
+        Parameter::Volatility(_) => origins.volatility,
+        Parameter::LongRun(_) => origins.long_run,
+        Parameter::HalfLife(_) => origins.half_life,
+    }
+}
+
 fn parameter_ui(ui: &mut Ui, queue: &mut Queue, factor: &RiskFactor, parameter: Parameter) {
     let name = format!("{} of {}", parameter.text(), factor.name);
+    let is_fitted = origin_of(factor, parameter) == Origin::Fitted;
     let changed = |ui: &mut Ui| match parameter {
-        Parameter::HalfLife(half_life) => half_life_ui(ui, &name, half_life).map(Parameter::HalfLife),
+        Parameter::HalfLife(half_life) => {
+            half_life_ui(ui, &name, half_life, is_fitted).map(Parameter::HalfLife)
+        }
         Parameter::Level(value) => level_field(&name, factor).ui(ui, value).map(Parameter::Level),
-        Parameter::LongRun(value) => level_field(&name, factor).ui(ui, value).map(Parameter::LongRun),
+        Parameter::LongRun(value) => {
+            shortened(level_field(&name, factor), is_fitted).ui(ui, value).map(Parameter::LongRun)
+        }
         Parameter::Drift(value) => {
-            NumberField::new(&name, "% a year").shown(Shown::Percent).ui(ui, value).map(Parameter::Drift)
+            shortened(NumberField::new(&name, "% a year").shown(Shown::Percent), is_fitted)
+                .ui(ui, value)
+                .map(Parameter::Drift)
         }
         Parameter::Volatility(value) => {
-            volatility_field(&name, factor).ui(ui, value).map(Parameter::Volatility)
+            shortened(volatility_field(&name, factor), is_fitted).ui(ui, value).map(Parameter::Volatility)
         }
     };
-    field_row_ui(ui, parameter.text(), |ui| {
+    let label = match parameter {
+        Parameter::Level(_) if is_fitted => "Level today, last of the history".to_owned(),
+        _ if is_fitted => format!("{}, fitted", parameter.text()),
+        _ => parameter.text().to_owned(),
+    };
+    field_row_ui(ui, &label, |ui| {
         if let Some(parameter) = changed(ui) {
             queue.push(Command::SetParameter { factor: factor.name.clone(), parameter });
         }
     });
+}
+
+/// A field that shows no more digits of a fitted parameter than it is worth.
+fn shortened(field: NumberField<'_>, is_fitted: bool) -> NumberField<'_> {
+    if is_fitted { field.digits(FITTED_DIGITS) } else { field }
 }
 
 fn level_field<'a>(name: &'a str, factor: &RiskFactor) -> NumberField<'a> {
@@ -153,7 +199,7 @@ fn volatility_field<'a>(name: &'a str, factor: &RiskFactor) -> NumberField<'a> {
 }
 
 /// A number of days, or no reversion at all.
-fn half_life_ui(ui: &mut Ui, name: &str, half_life: HalfLife) -> Option<HalfLife> {
+fn half_life_ui(ui: &mut Ui, name: &str, half_life: HalfLife, is_fitted: bool) -> Option<HalfLife> {
     let mut has_reversion = matches!(half_life, HalfLife::Days(_));
     let toggle = ui.checkbox(&mut has_reversion, "reverts").accessible_name(format!("Reversion, {name}"));
     if toggle.on_hover_text("Without it the factor is a random walk without drift").changed() {
@@ -161,5 +207,5 @@ fn half_life_ui(ui: &mut Ui, name: &str, half_life: HalfLife) -> Option<HalfLife
         return Some(if has_reversion { days } else { HalfLife::None });
     }
     let HalfLife::Days(days) = half_life else { return None };
-    NumberField::new(name, "days").range(0.01..=1e6).ui(ui, days).map(HalfLife::Days)
+    shortened(NumberField::new(name, "days").range(0.01..=1e6), is_fitted).ui(ui, days).map(HalfLife::Days)
 }
