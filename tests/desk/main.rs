@@ -9,6 +9,8 @@ mod hand;
 mod edits;
 /// Any edits in any order.
 mod any;
+/// A history and what it fills.
+mod history;
 /// Messages.
 mod notices;
 /// Steps back and forth.
