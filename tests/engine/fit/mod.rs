@@ -2,5 +2,6 @@
 
 mod evidence;
 mod geometric;
+mod open_data;
 mod refusals;
 mod reverting;
