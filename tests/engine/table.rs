@@ -1,7 +1,9 @@
 //! Printed and standard tables, their source in each test.
 
 use crate::support::*;
-use ebbmark_engine::maths::{UpperTail, normal_quantile, rank_range};
+use ebbmark_engine::fit::Refusal;
+use ebbmark_engine::fit::reverting::fit_reverting;
+use ebbmark_engine::maths::{UpperTail, normal_quantile, rank_range, sample_moments};
 use ebbmark_engine::measures::first_reading;
 
 /// A tail probability on either side of a 95 % range.
@@ -101,5 +103,23 @@ fn table_shortfall_splits_the_atom() {
         let tail = UpperTail::from_rank(losses.clone(), rank);
         assert_eq!(tail.order_statistic(rank), Some(var));
         near(tail.mean_beyond(rank, level.tail_count(10)).unwrap().value, es, 1e-14);
+    }
+}
+
+#[test]
+fn table_hard_cases_of_nist() {
+    // NIST Statistical Reference Datasets, NumAcc2 to NumAcc4: 1,001 values, certified mean base + 0.2 and standard
+    // deviation 0.1 (divisor n - 1). In doubles the values of the last are themselves rounded by 6e-10 of the deviation.
+    for base in [1.0, 1e6, 1e7] {
+        let values: Vec<f64> =
+            std::iter::once(0.2).chain([0.1, 0.3].repeat(500)).map(|part| base + part).collect();
+        let moments = sample_moments(&values);
+        near(moments.mean.value, base + 0.2, 1e-8);
+        near(moments.sd.value * (1001.0_f64 / 1000.0).sqrt(), 0.1, 1e-9);
+        // Its lag-1 autocorrelation is certified as -0.999; the regression of each value on the one before drops the
+        // last square and has slope -999 / 998.999 by hand.
+        let found = fit_reverting(&path(&values, &[1; 1000], 1.0 / 252.0), false, 252.0);
+        let Err(Refusal::NoMemory { slope }) = found else { panic!("{found:?}") };
+        near(slope, -999.0 / 998.999, 1e-8);
     }
 }

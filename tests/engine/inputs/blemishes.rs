@@ -182,9 +182,10 @@ fn always_blanks_late_starts_and_early_ends_are_told() {
     cells[..5].iter_mut().for_each(String::clear);
     cells[59].clear();
     let found = notices(&on_weekdays(&cells), 252.0);
-    let lead = "history.csv, line 7, column Brook: starts on 2026-01-12, 5 of 60 rows late.";
+    let lead =
+        "history.csv, line 7, column Brook: its first value is on 2026-01-12, with 5 of 60 rows before it.";
     assert!(found[0].text.starts_with(lead), "{found:?}");
-    let lead = "history.csv, line 60, column Brook: ends on 2026-03-26, 1 row before the history does.";
+    let lead = "history.csv, line 60, column Brook: its last value is on 2026-03-26, 1 row before the history's last.";
     assert!(found[1].text.starts_with(lead), "{found:?}");
 }
 

@@ -27,12 +27,12 @@ impl Blemish {
                 format!("{value} on every date. Its volatility would be 0 and its correlations undefined.")
             }
             BlemishKind::LateStart { missing, rows } => format!(
-                "starts on {date}, {missing} of {rows} rows late. It is fitted on fewer dates than others, and correlations \
-                 on common dates start with it, for all factors."
+                "its first value is on {date}, with {missing} of {rows} rows before it. It is fitted on fewer dates than \
+                 others, and correlations on common dates start with it, for all factors."
             ),
             BlemishKind::EarlyEnd { missing } => format!(
-                "ends on {date}, {} before the history does. Its last level is as old as that, and correlations on common \
-                 dates end with it, for all factors.",
+                "its last value is on {date}, {} before the history's last. Its level is as old as that where no other is \
+                 given, and correlations on common dates end with it, for all factors.",
                 counted(missing, "row")
             ),
             BlemishKind::Blanks { count, longest } => format!(
